@@ -31,7 +31,7 @@ def registry():
     return ureg
 
 
-@dataclass(frozen=True)
+@dataclass(frozen=True, eq=False)
 class Dimension:
     """What a number measures: its unit in each set, the units an entry may use, and an example of each."""
 
@@ -116,6 +116,7 @@ def _convert(value, unit, dimension, unit_set, shown, field):
                                 f'"{dimension.examples[unit_set]}"') from error
 
 
+@lru_cache(4096)
 def read(text, dimension, unit_set, field):
     """Return the number that `text` states, in the base unit of `dimension` in `unit_set`.
 
@@ -243,6 +244,7 @@ def _digits(value, dimension, unit_set):
     return trimmed(value)
 
 
+@lru_cache(4096)
 def text(value, dimension, unit_set):
     """Return `value` [base unit] as the trade prints it, with its unit.
 
@@ -260,6 +262,7 @@ def text(value, dimension, unit_set):
     return f"{number} {unit}".strip()
 
 
+@lru_cache(4096)
 def latex(value, dimension, unit_set):
     r"""Return `value` [base unit] as LaTeX with its unit.
 
