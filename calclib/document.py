@@ -72,10 +72,10 @@ def _table(columns, rows, marks=None, caption=""):
             "marks": {str(k): v for k, v in (marks or {}).items()}, "caption": caption}
 
 
-def _figure(figure, alt, caption):
+def _figure(figure, alt, caption, vectors):
     from calclib import sketch  # matplotlib is slow to import and many callers want numbers only
-    return {"type": "figure", "svg": sketch.svg(figure), "png": base64.b64encode(sketch.png(figure)).decode(),
-            "alt": alt, "caption": caption, "width": 1.0}
+    return {"type": "figure", "svg": sketch.svg(figure) if vectors else "",
+            "png": base64.b64encode(sketch.png(figure)).decode(), "alt": alt, "caption": caption, "width": 1.0}
 
 
 def summary(calc):
@@ -118,13 +118,13 @@ def loads(calc):
         [("Axial tension", "left"), ("Value", "right"), ("Level", "left"), ("Source", "left")], rows)])]
 
 
-def sketch_section(calc):
+def sketch_section(calc, vectors=True):
     from calclib import sketch
     drawing = calc.case.kind.sketch(calc.x, calc)
     governing = calc.governing.title
     return [_section("sketch", "Sketch", [_figure(
         sketch.draw(drawing), f"Dimensioned sketch of the {calc.case.kind.title.lower()}. {drawing.title}.",
-        f"To scale. Governing limit state: {governing}.")])]
+        f"To scale. Governing limit state: {governing}.", vectors)])]
 
 
 def strength(calc):
@@ -159,12 +159,12 @@ def detailing(calc):
         rows, marks)])]
 
 
-def sensitivity(calc):
+def sensitivity(calc, vectors=True):
     from calclib.explore import sensitivity as explore
     nodes = []
     for plot in calc.case.kind.plots:
         made = explore.plot(calc, plot)
-        nodes.append(_figure(made.figure, made.alt, made.caption))
+        nodes.append(_figure(made.figure, made.alt, made.caption, vectors))
     return [_section("sensitivity", "Sensitivity", nodes)]
 
 
@@ -196,6 +196,11 @@ def _value(calc, each):
     if value is None:
         return ""
     return units.text(value, each.dimension, calc.x.units) if each.dimension else value
+
+
+def echo(calc):
+    """Return each number as it was read, for the form: name -> text."""
+    return {each.name: _value(calc, each) for each in calc.case.kind.all_fields() if each.dimension}
 
 
 def inputs(calc):

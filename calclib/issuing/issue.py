@@ -1,0 +1,150 @@
+"""Issue a calc: run its workbook in a clean kernel, export, and write one folder per revision, whole or not at all."""
+
+import json
+import os
+import shutil
+import tempfile
+from pathlib import Path
+
+import nbformat
+from nbclient import NotebookClient
+
+import calclib
+from calclib import case as cases
+from calclib.bundles import CALC
+from calclib.calc import evaluate
+from calclib.errors import CalcError
+
+# The running kernel is emptied and moved to the folder of the calc before each workbook.
+_CLEAN = "get_ipython().reset(new_session=True)\nimport os as _os\n_os.environ['CALCLIB_BATCH'] = '1'\n_os.chdir({!r})"
+
+
+def workbook_of(kind):
+    """Return the path of the workbook of a kind: beside the package in a checkout, inside it when installed."""
+    package = Path(calclib.__file__).parent
+    for folder in (package.parent / "workbooks", package / "_workbooks"):
+        path = folder / f"{kind.name}.ipynb"
+        if path.exists():
+            return path
+    raise CalcError(f"no workbook {kind.name}.ipynb beside calclib; reinstall calclib.")
+
+
+class Issuer:
+    """Issues calcs; the kernel is started for the first and serves the others of the same run.
+
+    Use it as a context manager, so that the kernel is ended.
+    """
+
+    def __init__(self):
+        self._client = None
+
+    def __enter__(self):
+        return self
+
+    def __exit__(self, *_):
+        if self._client is not None and self._client.km is not None:
+            self._client._cleanup_kernel()
+
+    def build(self, case):
+        """Return {file name: bytes} of an issued calc: PDF, HTML, executed notebook, record, case."""
+        from calclib.issuing import pages
+        from calclib.issuing.html import write_html
+        from calclib.issuing.pdf import write_pdf
+        calc = evaluate(case)
+        name = f"{calc.x.calc_number}-rev-{calc.x.revision}"
+        content = case.yaml()
+        notebook = self._run(case.kind, f"{name}.yaml", content)
+        document, case_text, record = pages.document_of(notebook)
+        if case_text != content:
+            raise CalcError(f"{name}: the workbook changed the case while it ran; nothing was issued.")
+        files = {
+            f"{name}.yaml": content.encode(),
+            f"{name}.json": (json.dumps(record, indent=1, ensure_ascii=False) + "\n").encode(),
+            f"{name}.ipynb": pages.serialised(notebook),
+        }
+        attachments = pages.attachments(files)
+        files[f"{name}.html"] = write_html(document, attachments).encode()
+        files[f"{name}.pdf"] = write_pdf(document, attachments)
+        return files
+
+    def issue(self, case_path, to):
+        """Write the revision's folder below `to` and return the paths of its files.
+
+        Issued again with the same inputs, date and version nothing changes and the paths are returned.
+
+        Raises
+        ------
+        CalcError : the case has no number, or the revision is issued already with other content.
+        """
+        case = cases.load(case_path)
+        calc = evaluate(case)
+        files = self.build(case)
+        folder = Path(to) / calc.x.calc_number / f"rev-{calc.x.revision}"
+        if folder.exists():
+            _refuse_if_different(folder, files)
+        else:
+            _write_folder(folder, files)
+        order = (".pdf", ".html", ".ipynb", ".json", ".yaml")
+        return [folder / name for name in sorted(files, key=lambda n: order.index(Path(n).suffix))]
+
+    def _run(self, kind, case_name, content):
+        notebook = nbformat.read(workbook_of(kind), as_version=4)
+        _set_case(notebook, case_name)
+        with tempfile.TemporaryDirectory(prefix="calc-") as folder:
+            (Path(folder) / case_name).write_text(content, encoding="utf-8", newline="\n")
+            if self._client is None:
+                self._client = NotebookClient(notebook, kernel_name="python3", record_timing=False, timeout=120)
+            client = self._client
+            client.nb = notebook
+            client.reset_execution_trackers()
+            with client.setup_kernel(cleanup_kc=False):
+                client.execute_cell(nbformat.v4.new_code_cell(_CLEAN.format(folder)), 0)
+                for index, cell in enumerate(notebook.cells):
+                    client.execute_cell(cell, index)
+                client.execute_cell(nbformat.v4.new_code_cell(_CLEAN.format(tempfile.gettempdir())), 0)
+        return _as_issued(notebook)
+
+
+def _set_case(notebook, case_name):
+    """Put the case into a cell behind the parameters, by the convention of papermill."""
+    place = next(i for i, cell in enumerate(notebook.cells) if "parameters" in cell.metadata.get("tags", []))
+    cell = nbformat.v4.new_code_cell(f"# Parameters of this run\ncase = {json.dumps(case_name, ensure_ascii=False)}\n")
+    cell.id = "injected-parameters"
+    cell.metadata["tags"] = ["injected-parameters", "hide-input"]
+    notebook.cells.insert(place + 1, cell)
+
+
+def _as_issued(notebook):
+    """Remove what differs from run to run: counters, kernel details, widget state."""
+    count = 0
+    for cell in notebook.cells:
+        if cell.cell_type == "code":
+            count += 1
+            cell.execution_count = count
+            for output in cell.outputs:
+                if "execution_count" in output:
+                    output["execution_count"] = count
+    notebook.metadata = {"kernelspec": notebook.metadata["kernelspec"], "language_info": {"name": "python"}}
+    if not any(CALC in output.get("data", {}) for cell in notebook.cells for output in cell.get("outputs", [])):
+        raise CalcError("the workbook ran without storing a calc; its last cell must be book.close().")
+    return notebook
+
+
+def _refuse_if_different(folder, files):
+    present = {path.name: path.read_bytes() for path in folder.iterdir()}
+    if present != files:
+        raise CalcError(f"{folder}: this revision is issued already, with other content. An issued revision is never "
+                        "overwritten: raise the revision in the case, or issue to another folder.")
+
+
+def _write_folder(folder, files):
+    folder.parent.mkdir(parents=True, exist_ok=True)
+    staging = Path(tempfile.mkdtemp(prefix=f".{folder.name}-", dir=folder.parent))
+    try:
+        for name, content in files.items():
+            cases.write_whole(staging / name, content)
+        os.chmod(staging, 0o755)
+        os.rename(staging, folder)
+    except BaseException:
+        shutil.rmtree(staging, ignore_errors=True)
+        raise
