@@ -50,6 +50,7 @@ class Block:
     reason: str = ""                  # why the limit state does not apply
     notes: list = field(default_factory=list)
     advisory: bool = False            # shown beside the others, never governs
+    counts: bool = True               # False: a block that is no limit state, whatever its reason
 
     def __call__(self, equation, note="", symbols=None, **values):
         """Compute one equation, record it, and return its result."""
@@ -102,9 +103,13 @@ class Block:
         """Close the block as a limit state that does not apply, with its reason."""
         self.reason = reason
 
+    def left_out(self, reason):
+        """Close the block, which is no limit state, with the reason why it has no equations."""
+        self.reason, self.counts = reason, False
+
     @property
     def is_limit_state(self):
-        return self.available is not None or bool(self.reason)
+        return self.available is not None or (self.counts and bool(self.reason))
 
     @property
     def passes(self):
@@ -271,14 +276,23 @@ def evaluate(case):
     return Calc(case, x, run.blocks, run.rules, run.messages, run.assumptions, run)
 
 
-def sweep(case, **arrays):
-    """Return {limit state: available strength} [kip or N] with arrays [base unit] in the place of some inputs.
+@dataclass(frozen=True)
+class Curve:
+    """One limit state over a sweep: available strength [kip or N], NaN where no number exists."""
 
-    Where no number exists the strength is NaN. All limit states are computed at once.
+    key: str
+    title: str
+    available: np.ndarray
+    required: float               # what it is compared with [kip or N]
+    advisory: bool
+
+
+def sweep(case, **arrays):
+    """Return a Curve for each limit state, with arrays [base unit] in the place of some inputs, all at once.
 
     Raises
     ------
-    CaseErrors, EntryError : the case itself has no number.
+    CaseErrors, EntryError : the case itself cannot be used.
     """
     x, _ = read_inputs(case.kind, case.texts)
     arrays = {name: np.asarray(values, float) for name, values in arrays.items()}
@@ -286,5 +300,5 @@ def sweep(case, **arrays):
     run = Run(SimpleNamespace(**{**vars(x), **arrays}), arrays=True)
     case.kind.evaluate(run.x, run)
     outside = np.broadcast_to(run.outside, shape)
-    return {block.title: np.where(outside, np.nan, np.broadcast_to(block.available, shape))
-            for block in run.blocks if block.available is not None and not block.advisory}
+    return [Curve(block.key, block.title, np.where(outside, np.nan, np.broadcast_to(block.available, shape)),
+                  block.required, block.advisory) for block in run.blocks if block.available is not None]

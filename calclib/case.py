@@ -164,3 +164,11 @@ def write_whole(path, content):
     except BaseException:
         Path(temporary).unlink(missing_ok=True)
         raise
+
+
+def from_record(record):
+    """Return the Case whose inputs a record holds."""
+    kind = record["results"]["kind"]
+    if kind not in KINDS:
+        raise CalcError(f'the record is of kind "{kind}", which is not known here.')
+    return Case(KINDS[kind], dict(record["inputs"]), tuple(tuple(row) for row in record["revisions"]))

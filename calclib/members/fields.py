@@ -5,6 +5,8 @@ from dataclasses import dataclass
 from datetime import date
 from types import SimpleNamespace
 
+import numpy as np
+
 from calclib import units
 from calclib.errors import CaseErrors, EntryError, UnknownInput, nearest
 
@@ -102,14 +104,18 @@ class Kind:
 
 @dataclass(frozen=True)
 class Plot:
-    """A sensitivity plot that every calc of a kind carries: one input, from and to as multiples of its present value."""
+    """A sensitivity plot that every calc of a kind carries."""
 
-    field: str
-    low: float
-    high: float
+    field: str                    # the input along the axis
+    points: object                # (x) -> {input: array}: where to evaluate; the first is the axis
+    present: object = None        # (x) -> present value, where the input itself may be blank
     sizes: object = None          # (x) -> [(value, text)]: standard sizes to mark along the axis
-    label: str = ""
-    spread: object = None         # (x) -> (low, high) in the base unit, where multiples make no sense
+    discrete: bool = False        # only the points exist, such as the sizes of a series
+
+
+def multiples(name, low, high, count=200):
+    """Return points from `low` to `high` times the present value of one input."""
+    return lambda x: {name: np.linspace(low * getattr(x, name), high * getattr(x, name), count)}
 
 
 PROJECT = (

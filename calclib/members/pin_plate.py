@@ -1,10 +1,13 @@
 """Pin-connected plate: AISC 360 D5, with bearing on the pin by J7."""
 
+from math import cos, pi, sin, sqrt
+
 import numpy as np
 
 from calclib import units
 from calclib.equations.aisc360 import RUPTURE, YIELDING, members, pins
-from calclib.members.fields import NO, YES, Field, Kind, Plot
+from calclib.members.fields import NO, YES, Field, Kind, Plot, multiples
+from calclib.sketch import Arrow, BreakLine, Circle, Dimension, Drawing, FailurePath, Leader, Named, Outline
 
 CLEARANCE = {"US": (1 / 32, 1 / 16), "SI": (1.0, 2.0)}   # D5.1(b), D5.2(b): printed as pairs, in and mm
 LARGE_PIN = {"US": 3.0, "SI": 75.0}                      # D5.2(b), 2022: larger clearance from this pin diameter
@@ -187,11 +190,84 @@ def _messages(x, run, clearance):
     run.assume("A lifting lug lies outside D5 and needs a lifting standard with its own design factors.", "D5")
 
 
+def sketch(x, calc):
+    """Return elevation and side view of the plate to scale, with the path of the governing limit state.
+
+    The centre of the hole is the origin; the plate pulls down and the pin holds it up.
+    """
+    def named(symbol, value):
+        return Named(symbol, units.text(value, units.LENGTH, x.units))
+
+    r, a, w, t = x.hole_diameter / 2, x.end_distance, x.plate_width, x.plate_thickness
+    b_1 = (w - 2 * r) / 2 if x.side_distance is None else x.side_distance
+    left, right, top, bottom = -r - b_1, w - r - b_1, r + a, -r - max(w, 2 * a) * 0.75
+    side = right + max(0.35 * w, 3 * t)          # left face of the side view
+    parts = [
+        Outline([(left, bottom), *_end(left, right, top, r, x.corner_distance), (right, bottom)], closed=False),
+        BreakLine((left, bottom), (right, bottom)),
+        Circle((0, 0), 2 * r, cross=True), Circle((0, 0), x.pin_diameter, weight="thin"),
+        Outline([(side, bottom), (side, top), (side + t, top), (side + t, bottom)], closed=False),
+        BreakLine((side, bottom), (side + t, bottom)),
+        *(Outline([(side, y), (side + t, y)], closed=False, weight="hidden") for y in (-r, r)),
+        Arrow((0, bottom), (0, -2), Named(calc.run.required_symbol.replace("{", "").replace("}", ""),
+                                        units.text(calc.run.required, units.FORCE, x.units))),
+        Dimension((left, top), (right, top), 2, named("w", w), "horizontal"),
+        Dimension((left, 0), (-r, 0), -1, named("b" if x.side_distance is None else "b_1", b_1), "horizontal",
+                  beyond=(0, bottom * 0.62)),
+        Dimension((right, 0), (r, 0), -1, named("b" if x.side_distance is None else "b_2", right - r), "horizontal",
+                  beyond=(0, bottom * 0.62)),
+        Dimension((0, r), (0, top), 1, named("a", a), "vertical", beyond=(right, 0)),
+        Dimension((side, top), (side + t, top), 1, named("t", t), "horizontal"),
+        Leader((-r * cos(pi / 4), -r * sin(pi / 4)), (-3.2, -2.2), named("d_h", 2 * r)),
+        Leader((x.pin_diameter / 2 * cos(pi / 4), -x.pin_diameter / 2 * sin(pi / 4)), (2.6, -2.6),
+               named("d", x.pin_diameter)),
+    ]
+    if x.corner_distance is not None:
+        edge, cut = r / sqrt(2), (r + x.corner_distance) / sqrt(2)
+        parts.append(Dimension((-edge, edge), (-cut, cut), 0, named("c", x.corner_distance)))
+    parts += _failure_path(x, calc, r, left, right, top, bottom)
+    return Drawing(parts, title="Elevation and side view", unit="in" if x.units == "US" else "mm")
+
+
+def _end(left, right, top, r, c):
+    """Return the points of the plate's end from left to right, with 45 degree cuts where they meet the plate."""
+    if c is None:
+        return [(left, top), (right, top)]
+    reach = sqrt(2) * (r + c)                    # a cut is the line |x| + y = reach
+    points = []
+    for edge, sign in ((left, -1), (right, 1)):
+        cuts = abs(edge) + top > reach
+        corner = [(edge, reach - abs(edge)), (sign * (reach - top), top)] if cuts else [(edge, top)]
+        points += corner if sign < 0 else corner[::-1]
+    return points
+
+
+def _failure_path(x, calc, r, left, right, top, bottom):
+    """Return the path along which the plate gives way in the governing limit state."""
+    key, d = calc.governing.key, x.pin_diameter
+    b_e = calc["geometry"].steps[-1].result
+    if key == "tensile rupture":
+        lines = [[(-r - b_e, 0), (-r, 0)], [(r, 0), (r + b_e, 0)]]
+    elif key == "shear rupture":
+        rise = sqrt(max(r ** 2 - (d / 2) ** 2, 0))
+        lines = [[(-d / 2, rise), (-d / 2, top)], [(d / 2, rise), (d / 2, top)]]
+    elif key == "pin bearing":
+        lines = [[(r * cos(pi * i / 24), r * sin(pi * i / 24)) for i in range(3, 22)]]
+    else:
+        lines = [[(left, bottom * 0.85), (right, bottom * 0.85)]]
+    return [FailurePath(line, calc.governing.title.lower() if line is lines[0] else "") for line in lines]
+
+
+def _hole_range(x):
+    """Return hole diameters from the pin's own to the largest that the edition covers."""
+    return {"hole_diameter": np.linspace(x.pin_diameter, x.pin_diameter + CLEARANCE[x.units][
+        1 if x.standard.endswith("22") else 0], 200)}
+
+
 PLOTS = (
-    Plot("hole_diameter", 1, 1, spread=lambda x: (
-        x.pin_diameter, x.pin_diameter + CLEARANCE[x.units][1 if x.standard.endswith("22") else 0])),
-    Plot("end_distance", 0.5, 1.6),
-    Plot("plate_thickness", 0.4, 1.8),
+    Plot("hole_diameter", _hole_range),
+    Plot("end_distance", multiples("end_distance", 0.4, 1.7)),
+    Plot("plate_thickness", multiples("plate_thickness", 0.4, 1.8)),
 )
 
 KIND = Kind(
@@ -199,4 +275,4 @@ KIND = Kind(
     title="Pin-connected plate",
     scope="Strength of a pin-connected plate in tension and its detailing by AISC 360 section D5, with bearing on the "
           "pin by J7. Not covered: the pin itself, cheek plates, fatigue, lifting lugs.",
-    fields=FIELDS, evaluate=evaluate, sketch=None, plots=PLOTS)
+    fields=FIELDS, evaluate=evaluate, sketch=sketch, plots=PLOTS)

@@ -1,10 +1,13 @@
 """Threaded rod: AISC 360 J3 (tensile strength of threaded parts), D2 (body), elongation, and a maker's end fitting."""
 
+import numpy as np
+
 from calclib import units
 from calclib.equations import mechanics, threads
 from calclib.equations.aisc360 import RUPTURE, YIELDING, members, rods
 from calclib.errors import EntryError
 from calclib.members.fields import Field, Kind, Plot
+from calclib.sketch import Arrow, Break, Dimension, Drawing, Leader, Named, Outline
 from calclib.tables import threads as threads_of
 
 BODY_RULE, STRESS_AREA_RULE = "0.75 F_u on body area", "F_u on tensile stress area"
@@ -133,13 +136,13 @@ def _standard_pitch(thread):
 
 
 def _elongation(x, run, A_b, A_t):
+    part = run.block("elongation", "Elastic elongation under service load")
     if x.service_load is None:
-        run.assume("Elongation is not computed: no service load is given.")
+        part.left_out("Elongation is not computed: no service load is given.")
         return
     if not run.arrays and x.shank_length + x.threaded_length == 0:
         raise EntryError("shank_length", "a service load is given and both lengths are zero; give the shank length and "
                                          "the threaded length under load")
-    part = run.block("elongation", "Elastic elongation under service load")
     part(mechanics.elongation_of_threaded_rod, P=x.service_load, E=x.modulus, L_b=x.shank_length, A_b=A_b,
          L_t=x.threaded_length, A_t=A_t, symbols={"P": "P_{s}"})
     run.note("The elongation is elastic only; seating of nuts and take-up come on top.")
@@ -197,9 +200,78 @@ def _messages(x, run, A_b, A_t):
                "area.", "Appendix 3")
 
 
+def sketch(x, calc):
+    """Return the rod along its length to scale, threads as thin lines at the root, with what holds its ends."""
+    def named(symbol, value):
+        return Named(symbol, units.text(value, units.LENGTH, x.units))
+
+    d = x.rod_diameter
+    given = x.shank_length + x.threaded_length > 0
+    thread, shank = (x.threaded_length / 2, x.shank_length) if given else (2 * d, 10 * d)
+    length, nut, root = shank + 2 * thread, 0.875 * d, 0.42 * d
+    parts = [Outline([(0, -d / 2), (length, -d / 2), (length, d / 2), (0, d / 2)]),
+             Outline([(-1.2 * nut, 0), (length + 1.2 * nut, 0)], closed=False, weight="centre")]
+    for start, end in ((0.0, thread), (length - thread, length)):
+        if thread:
+            parts += [Outline([(start, y), (end, y)], closed=False, weight="thin") for y in (-root, root)]
+    parts += [Outline([(thread, -d / 2), (thread, d / 2)], closed=False)] if thread else []
+    parts += [Outline([(length - thread, -d / 2), (length - thread, d / 2)], closed=False)] if thread else []
+    parts.append(Outline([(-nut, -0.75 * d), (0, -0.75 * d), (0, 0.75 * d), (-nut, 0.75 * d)]))
+    reach = nut if x.fitting == NO_FITTING else 2.2 * d
+    parts.append(Outline([(length, -0.75 * d), (length + reach, -0.75 * d), (length + reach, 0.75 * d),
+                          (length, 0.75 * d)]))
+    if x.fitting != NO_FITTING:
+        parts.append(Leader((length + reach / 2, 0.75 * d), (-1.5, 1.6), f"{x.fitting}, by its maker"))
+    force = Named(calc.run.required_symbol.replace("{", "").replace("}", ""),
+                  units.text(calc.run.required, units.FORCE, x.units))
+    parts += [Arrow((-nut, 0), (-2.5, 0), force), Arrow((length + reach, 0), (2.5, 0), force)]
+    if given and shank:
+        parts.append(Dimension((thread, -d / 2), (length - thread, -d / 2), -2, named("L_b", shank), "horizontal"))
+    if given and thread:
+        half = "thread " + units.text(thread, units.LENGTH, x.units)
+        parts += [Dimension((start, -d / 2), (end, -d / 2), -2, half, "horizontal")
+                  for start, end in ((0.0, thread), (length - thread, length))]
+    parts.append(Leader((thread / 2, d / 2), (1.5, 1.6), named("d", d)))
+    if length > 14 * d:
+        parts.append(Break(thread + 2 * d, length - thread - 2 * d, -d, d) if shank > 6 * d else
+                     Break(d, thread - d, -d, d))
+    note = "" if given else "Lengths are not given; drawn 14 diameters long."
+    return Drawing(parts, title="Elevation", unit="in" if x.units == "US" else "mm", note=note)
+
+
+def _series_sizes(x):
+    """Return every size of the series between half and twice the present diameter, with its pitch."""
+    near = [thread for thread in threads_of(x.thread_series)
+            if 0.5 <= thread.d / x.rod_diameter <= 2 and (x.thread_series != "ISO fine" or thread.P <= 4)]
+    return {"rod_diameter": np.array([thread.d for thread in near]),
+            "pitch": np.array([_standard_pitch(thread) for thread in near])}
+
+
+def _pitches(x):
+    """Return pitches from half to twice the present one."""
+    pitch = _present_pitch(x)
+    return {"pitch": np.linspace(0.5 * pitch, 2 * pitch, 200)}
+
+
+def _present_pitch(x):
+    if x.pitch is not None:
+        return x.pitch
+    return next(_standard_pitch(thread) for thread in threads_of(x.thread_series)
+                if abs(thread.d - x.rod_diameter) < 1e-6 * thread.d)
+
+
+def _standard_pitches(x):
+    """Return the standard pitches of this diameter in every series of the unit set, to mark along the axis."""
+    return [(_standard_pitch(thread), series) for series in SERIES
+            if (series in INCH_SERIES) == (x.units == units.US)
+            for thread in threads_of(series) if abs(thread.d - x.rod_diameter) < 1e-6 * thread.d]
+
+
 PLOTS = (
-    Plot("rod_diameter", 0.5, 2.0),
-    Plot("pitch", 0.5, 2.0),
+    Plot("rod_diameter", _series_sizes, discrete=True,
+         sizes=lambda x: [(d, units.text(d, units.LENGTH, x.units).split()[0])
+                          for d in _series_sizes(x)["rod_diameter"]]),
+    Plot("pitch", _pitches, present=_present_pitch, sizes=_standard_pitches),
 )
 
 KIND = Kind(
@@ -207,4 +279,4 @@ KIND = Kind(
     title="Threaded rod",
     scope="Tensile strength of a threaded rod by AISC 360 section J3, yielding of its body, elongation under service "
           "load, and the maker's rating of its end fitting. Not covered: fatigue, upset ends, pretension.",
-    fields=FIELDS, evaluate=evaluate, sketch=None, plots=PLOTS)
+    fields=FIELDS, evaluate=evaluate, sketch=sketch, plots=PLOTS)
