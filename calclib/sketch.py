@@ -298,7 +298,8 @@ class _Sheet:
             ends.append(point + n * away)
             if abs(away) > _GAP:
                 out = n * math.copysign(1, away)
-                self.paper.line([point + out * _GAP, ends[-1] + out * _OVER])
+                # Words between another dimension's extension lines would be read as that dimension's.
+                self.paper.line([point + out * _GAP, ends[-1] + out * _OVER], cost=2)
         self._dimension_line(part.text, *ends, u, n, side)
 
     def _dimension_line(self, text, a, b, u, n, outward):
@@ -351,7 +352,8 @@ class _Sheet:
                 for side in (1, -1):
                     elbow = end + (u + side * _RIGHT) * ROW * way
                     led.append(_beside(elbow, side, 2, (end, elbow), cost=2))
-        for a, b in pairwise(points):
+        pieces = sorted(pairwise(points), key=lambda piece: -math.dist(*piece))[:6]    # a curve has many alike
+        for a, b in pieces:
             n = np.array((a[1] - b[1], b[0] - a[0])) / math.hypot(*(b - a))
             beside += [Spot((a + b) / 2 + n * side * 4, 0.5 - n * side / 2) for side in (1, -1)]
         self._say(part.label, ahead + beside + led, bold=True)

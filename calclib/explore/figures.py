@@ -70,7 +70,7 @@ def sensitivity_figure(x_label, x, curves, required=None, present=None, *, besid
     least = _least(line_x, x, values.values())
     regions = _regions(x, np.isnan(list(values.values())).any(axis=0), unusable)
     matters = [*least[np.isfinite(least)], *([] if required is None else [required])]
-    chart = _Chart(x_label, y_label, x, drawn, matters, ticks, x_format, size)
+    chart = _Chart(x_label, y_label, x, drawn, matters, ticks, x_format, size, present)
     for low, high, _ in regions:
         chart.region(low, high)
     for (name, y), dash in zip(drawn.items(), _dashes(len(drawn)), strict=True):
@@ -106,7 +106,7 @@ def series_figure(x_label, series, required=None, present=None, *, ticks=None, y
     every = np.unique(np.concatenate([x for x, _ in checked.values()]))
     strengths = {name: y for name, (_, y) in checked.items()}
     matters = [v for y in strengths.values() for v in y[np.isfinite(y)]] + ([] if required is None else [required])
-    chart = _Chart(x_label, y_label, every, strengths, matters, ticks, x_format, size)
+    chart = _Chart(x_label, y_label, every, strengths, matters, ticks, x_format, size, present and present[1])
     for number, ((name, (x, y)), dash) in enumerate(zip(checked.items(), _dashes(len(checked)), strict=True)):
         chart.curve(name, x, y, dash, _MARKS[number % len(_MARKS)])
     chart.name_curves()
@@ -234,7 +234,7 @@ def _y_numbers(values, matters):
 class _Chart:
     """Axes laid out in points: `frame` is (left, bottom, right, top) of the area for the lines."""
 
-    def __init__(self, x_label, y_label, x, curves, matters, ticks, x_format, size):
+    def __init__(self, x_label, y_label, x, curves, matters, ticks, x_format, size, present=None):
         self.paper, self.size, self.ends = Paper(), (size[0] * 72, size[1] * 72), []
         pad = 0 if len(x) > 1 else abs(x[0]) * 0.1 or 1.0
         self.low, self.high = x[0] - pad, x[-1] + pad
@@ -252,7 +252,7 @@ class _Chart:
             self.paper.line([at, (left - 3.5, at[1])])
             self.paper.words(text, (left - 6, at[1]), (1, 0.5), _SMALL, backed=False)
         self.paper.line([(left, top), (left, bottom), (right, bottom)])
-        self._x_axis(x_format, ticks)
+        self._x_axis(x_format, ticks, present)
         x_label, y_label = wrapped(x_label, right - left), wrapped(y_label, top - bottom + 20)
         self.paper.words(x_label, ((left + right) / 2, 3), (0.5, 0), backed=False)
         self.paper.words(y_label, (4, (bottom + top) / 2), (0.5, 1), angle=90, backed=False)
@@ -266,24 +266,25 @@ class _Chart:
             return f"{name} (does not limit)"
         return f"{name} (above {self.top:.10g})" if numbers[-1] > self.top else name
 
-    def _x_axis(self, x_format, ticks):
+    def _x_axis(self, x_format, ticks, present):
         span = self.high - self.low
         if ticks is None and x_format == "inch":
             step = next((s for s in _INCH_STEPS if span / s <= 9), span / 8)
             ticks = [(v, None) for v in step * np.arange(math.ceil(self.low / step), self.high / step + 1e-9)]
         elif ticks is None:
             ticks = [(v, None) for v in _steps(self.low, self.high, 8)]
-        last = -math.inf
-        for value, text in sorted(ticks, key=lambda tick: tick[0]):
-            if not self.low - span * 1e-9 <= value <= self.high + span * 1e-9:
-                continue
+        inside = [tick for tick in ticks if self.low - span * 1e-9 <= tick[0] <= self.high + span * 1e-9]
+        taken = []
+        # The size in use is written first, the others from left to right where they still fit.
+        for value, text in sorted(inside, key=lambda tick: (tick[0] != present, tick[0])):
             text = _number(value, x_format) if text is None else text
             at, half = self.on_paper(value, self.bottom), words_size(text, _SMALL)[0] / 2
-            room = at[0] - half >= last + 5 and at[0] + half < self.size[0] - 2
+            low, high = at[0] - half, at[0] + half
+            room = low > 2 and high < self.size[0] - 2 and all(high + 5 <= a or b + 5 <= low for a, b in taken)
             self.paper.line([at, (at[0], at[1] - (5 if room else 2.5))])
             if room:
                 self.paper.words(text, (at[0], at[1] - 7), (0.5, 1), _SMALL, backed=False)
-                last = at[0] + half
+                taken.append((low, high))
 
     def on_paper(self, x, y):
         left, bottom, right, top = self.frame
@@ -337,7 +338,7 @@ class _Chart:
         """Write the names right of the frame, each by its line's end, moved apart where they would touch."""
         rows = sorted(self.ends, key=lambda row: self.frame[3] if row[1] is None else row[1][1])
         wanted = [self.frame[3] if end is None else end[1] for _, end, _, _ in rows]
-        heights = [words_size(name, _SMALL)[1] + 1 for name, *_ in rows]
+        heights = [words_size(name, _SMALL)[1] + 3 for name, *_ in rows]
         if sum(heights) > self.size[1] - 4:
             raise ValueError("The names of the curves need more than the height of the figure; shorten them.")
         right, start = self.frame[2], self.frame[2] + 12
@@ -377,7 +378,7 @@ class _Chart:
         left, _, right, top = self.frame
         width = words_size(text, _SMALL)[0]
         for x in (left + 24, right - width, (left + right) / 2):
-            if not self.paper.crowding((x - 28, top + 4, x + width + 4, top + 14)):
+            if not self.paper.crowding((x - 24, top + 6, x + width, top + 13)):
                 self.paper.line([(x - 24, top + 9), (x - 4, top + 9)], HEAVY)
                 self.paper.words(text, (x, top + 9), (0, 0.5), _SMALL)
                 return

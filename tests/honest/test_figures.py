@@ -398,6 +398,14 @@ def test_many_standard_sizes_are_thinned_out_to_what_is_legible():
     assert overlapping(figure) == []
 
 
+def test_the_size_in_use_is_written_whatever_is_left_out():
+    sizes = [(v, f"{v:.4g}") for v in np.linspace(0.25, 4, 31)]
+    x = np.array([v for v, _ in sizes])
+    for value, text in sizes:
+        figure = sensitivity_figure("d (in)", x, {"rupture": 30 * x ** 2}, present=value, ticks=sizes, present_label="p")
+        assert text in [w.text for w in words(figure)]
+
+
 def test_close_ends_have_names_apart():
     x = np.linspace(0, 1, 5)
     figure = sensitivity_figure("x", x, {f"limit state number {n}": 10 + n / 1000 + x for n in range(8)})
