@@ -242,9 +242,10 @@ class Paper:
             origin = -np.array(spot.anchor) * (w, h)
             corners = _turned(np.array([(0, 0), (w, 0), (w, h), (0, h)]) + origin, spot.angle, spot.at)
             box = (*corners.min(axis=0), *corners.max(axis=0))
-            score = spot.cost + self.crowding(box)
-            if frame and (box[0] < frame[0] or box[1] < frame[1] or box[2] > frame[2] or box[3] > frame[3]):
-                score += 1000
+            out = frame and (box[0] < frame[0] or box[1] < frame[1] or box[2] > frame[2] or box[3] > frame[3])
+            if out and best:
+                continue
+            score = 1000 if out else spot.cost + self.crowding(box)
             if best is None or score < best[0]:
                 best = score, spot
             if score == 0:
