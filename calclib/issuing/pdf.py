@@ -138,3 +138,11 @@ def _picture(node, folder):
     name = f"figure-{len(list(folder.glob('figure-*')))}.{suffix}"
     (folder / name).write_bytes(content)
     return name
+
+
+def __getattr__(name):
+    """Give nbconvert its exporter from here; importing nbconvert takes longer than writing a calc."""
+    if name == "CalcPDFExporter":
+        from calclib.issuing.exporters import CalcPDFExporter
+        return CalcPDFExporter
+    raise AttributeError(f"module {__name__!r} has no attribute {name!r}")
