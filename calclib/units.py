@@ -86,22 +86,33 @@ DOCSTRING_UNITS = {
 
 # --- reading ---------------------------------------------------------------------------------------------------
 
+LONGEST_ENTRY = 40  # characters; nothing the shop writes is longer
 _VULGAR = {"¼": "1/4", "½": "1/2", "¾": "3/4", "⅛": "1/8", "⅜": "3/8", "⅝": "5/8", "⅞": "7/8"}
-_NUMBER = r"(?:\d+[ -]+\d+/\d+|\d+/\d+|\d+\.?\d*(?:[eE][+-]?\d+)?|\.\d+(?:[eE][+-]?\d+)?)"
+_NUMBER = r"(?:\d+(?: *- *| +)\d+/\d+|\d+/\d+|\d+\.?\d*(?:[eE][+-]?\d+)?|\.\d+(?:[eE][+-]?\d+)?)"
 _ENTRY = re.compile(rf"([+-]?)\s*({_NUMBER})\s*(.*)", re.DOTALL)
 _FEET_AND_INCHES = re.compile(rf"([+-]?)\s*(\d+)\s*(?:'|ft\b)\s*[- ]?\s*({_NUMBER})\s*(?:\"|in\.?|inch|inches)")
 
 
 def _number(text, field):
+    """Return the number that stands there: exact where it has a fraction, infinite where no float holds it."""
+    if "/" not in text:
+        return float(text)
     whole, _, fraction = re.sub(r"[ -]+(?=\d+/)", "+", text).rpartition("+")
     try:
         value = Fraction(fraction)
-        if "/" in fraction and whole and value >= 1:
-            raise EntryError(field, f'"{text}" is a whole number and a fraction above one; write the size once, '
-                                    'as in "1-1/8 in"')
-        return value + Fraction(whole or 0)
     except ZeroDivisionError as error:
         raise EntryError(field, f'"{text}" divides by zero') from error
+    if whole and value >= 1:
+        raise EntryError(field, f'"{text}" is a whole number and a fraction above one; write the size once, '
+                                'as in "1-1/8 in"')
+    return value + Fraction(whole or 0)
+
+
+def _plain(text):
+    """Return an entry with the signs of a keyboard: 1½ as 1 1/2, ’ as ', − as -."""
+    plain = re.sub("[¼½¾⅛⅜⅝⅞]", lambda m: " " + _VULGAR[m.group()], text.strip())
+    plain = plain.replace("’", "'").replace("′", "'").replace("”", '"').replace("″", '"').replace("−", "-")
+    return plain.replace("–", "-").strip()
 
 
 def _convert(value, unit, dimension, unit_set, shown, field):
@@ -135,18 +146,17 @@ def read(text, dimension, unit_set, field):
     ...
     calclib.errors.EntryError: hole_diameter: 20 has no unit; write "13/16 in" or "20 mm".
     """
-    shown = text.strip()
-    plain = re.sub("[¼½¾⅛⅜⅝⅞]", lambda m: " " + _VULGAR[m.group()], shown)
-    plain = plain.replace("’", "'").replace("′", "'").replace("”", '"').replace("″", '"').replace("−", "-")
-    plain = plain.replace("–", "-").strip()
+    shown, plain = text.strip(), _plain(text)
     examples = f'write "{dimension.examples[US]}" or "{dimension.examples[SI]}"'
     if dimension is NUMBER:
         examples = f'write a plain number such as "{dimension.examples[US]}"'
     if not plain:
         raise EntryError(field, f"is empty; {examples}")
+    if len(plain) > LONGEST_ENTRY:
+        raise EntryError(field, f'"{shown[:LONGEST_ENTRY]}..." is too long for a number with a unit; {examples}')
     feet = _FEET_AND_INCHES.fullmatch(plain)
     if feet and dimension is LENGTH:
-        inches = 12 * Fraction(feet[2]) + _number(feet[3], field)
+        inches = 12 * int(feet[2]) + _number(feet[3], field)
         return _convert(float(-inches if feet[1] == "-" else inches), "inch", LENGTH, unit_set, shown, field)
     entry = _ENTRY.fullmatch(plain)
     if not entry:
@@ -175,7 +185,9 @@ def is_other_set(text, dimension, unit_set):
     >>> is_other_set("20 mm", LENGTH, US)
     True
     """
-    unit = dimension.accepted.get(re.sub(rf"^[+-]?\s*{_NUMBER}\s*", "", text.strip()))
+    plain = _plain(text)
+    feet = dimension is LENGTH and _FEET_AND_INCHES.fullmatch(plain)
+    unit = "inch" if feet else dimension.accepted.get(re.sub(rf"^[+-]?\s*{_NUMBER}\s*", "", plain))
     metric = {"millimeter", "centimeter", "meter", "newton", "kilonewton", "meganewton", "megapascal", "gigapascal",
               "millimeter**2"}
     return unit is not None and (unit in metric) != (unit_set == SI)
@@ -283,8 +295,10 @@ def latex(value, dimension, unit_set):
 def ratio_text(value, places=3):
     """Return a ratio rounded up, so that 1.0004 never prints as 1.000.
 
+    A billionth is not counted, as it is not in the judgment: 1.3 * 6.0 / 7.8 is a hair above 1 in binary.
+
     >>> ratio_text(1.0004), ratio_text(0.71111)
     ('1.001', '0.712')
     """
     scale = 10 ** places
-    return f"{math.ceil(round(value * scale, 9)) / scale:.{places}f}"
+    return f"{math.ceil(value * scale * (1 - 1e-9)) / scale:.{places}f}"
