@@ -12,7 +12,7 @@ class EntryError(CalcError):
 
     def __init__(self, field, problem):
         self.field, self.problem = field, problem
-        super().__init__(f"{field}: {problem}" + ("" if problem.endswith(".") else "."))
+        super().__init__(f"{field}: {problem}" + ("" if problem.endswith((".", "?")) else "."))
 
 
 class UnknownInput(EntryError):
