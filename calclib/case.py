@@ -98,6 +98,9 @@ def parse(content, name="the case"):
         raise CalcError(f"{name}{where}: not readable as YAML: {getattr(error, 'problem', error)}.") from error
     except CalcError as error:
         raise CalcError(f"{name}, {error}") from error
+    except RecursionError as error:
+        raise CalcError(f"{name}: lists or mappings stand too deep in each other; a case is a plain list of lines.") \
+            from error
     if not isinstance(data, dict):
         raise CalcError(f'{name}: is not a case; a case is a list of lines such as  plate_width: "4-1/4 in"')
     kind = data.pop("kind", None)
@@ -105,7 +108,7 @@ def parse(content, name="the case"):
         raise CalcError(f'{name}: has no "kind"; write one of: {", ".join(KINDS)}.')
     if not isinstance(kind, str) or kind not in KINDS:
         raise CalcError(f'{name}: "{kind}" is not a kind of member; the kinds are: {", ".join(KINDS)}'
-                        + nearest(str(kind), KINDS))
+                        + (nearest(str(kind), KINDS) or "."))
     revisions = _revisions(data.pop("revisions", []), name)
     for key, value in data.items():
         if not isinstance(value, str):
