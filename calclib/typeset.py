@@ -69,7 +69,8 @@ def _templates(equation, unit_set, symbols):
         raise TypesetError(f"{equation.name}: {len(equation.lines)} lines ran and {len(lines)} are shown")
     made = []
     for line in lines:
-        lhs, middle, result = (part.strip() for part in line.split("&="))
+        parts = [part.strip() for part in line.split("&=")]
+        lhs, middle, result = parts if len(parts) == 3 else ("", "", "")
         symbolic, equals, substituted = middle.partition(" = ")
         if not equals or "=" in substituted or result.count("⟦") != 1:
             raise TypesetError(f"{equation.name}: shown in an unexpected form: {line}")

@@ -67,7 +67,8 @@ class Argument:
 
 
 _ARGUMENT = re.compile(r"^(\w+) : (.+?) \[([^\]]+)\](?:, (.+))?$")
-_RANGES = {"positive": (0.0, math.inf, True), "not negative": (0.0, math.inf, False), None: (-math.inf, math.inf, False)}
+_RANGES = {"positive": (0.0, math.inf, True), "not negative": (0.0, math.inf, False),
+           None: (-math.inf, math.inf, False)}
 
 
 def _argument(line, owner):
@@ -104,7 +105,9 @@ def _docstring_arguments(function):
     return {a.name: a for a in arguments}, {r.name: r for r in results}
 
 
-def _check_expression(node, owner):
+def _check_expression(node, owner, known, source):
+    """Refuse an expression that is more than arithmetic on `known` names and plain numbers."""
+    called = {part.func for part in ast.walk(node) if isinstance(part, ast.Call)}
     for part in ast.walk(node):
         if not isinstance(part, _ALLOWED):
             raise EquationFormError(f"{owner}: {type(part).__name__} is not shown truthfully; one level up, "
@@ -112,10 +115,20 @@ def _check_expression(node, owner):
         if isinstance(part, ast.Call) and (not isinstance(part.func, ast.Name) or part.func.id not in FUNCTIONS
                                            or part.keywords):
             raise EquationFormError(f"{owner}: only {', '.join(FUNCTIONS)} may be called, without keywords")
-        if isinstance(part, ast.Constant) and (type(part.value) not in (int, float)):
-            raise EquationFormError(f"{owner}: {part.value!r} is not a plain number")
+        if isinstance(part, ast.Name) and part not in called and part.id not in known:
+            raise EquationFormError(f"{owner}: {part.id} is neither an argument nor assigned above, so it would be "
+                                    "shown without a value")
+        if isinstance(part, ast.Constant):
+            if type(part.value) not in (int, float):
+                raise EquationFormError(f"{owner}: {part.value!r} is not a plain number")
+            written = ast.get_source_segment(source, part)
+            if not re.fullmatch(r"\d+(\.\d+)?", written):
+                raise EquationFormError(f"{owner}: write the number {written} as plain digits")
     if isinstance(node, (ast.Name, ast.Constant)):
         raise EquationFormError(f"{owner}: a bare name or number is not shown as an equation")
+    if isinstance(node, ast.UnaryOp):
+        raise EquationFormError(f"{owner}: an equation that is one negative term is not shown; write it as a product "
+                                "or a difference")
 
 
 def _body(function):
@@ -142,9 +155,10 @@ def _body(function):
         for word in _SWALLOWED:
             if word in line:
                 raise EquationFormError(f'{owner}: the line of {name} holds "{word}" and would vanish')
-        if re.search(r"\d[eE][+-]?\d|\d_\d", line):
-            raise EquationFormError(f"{owner}: write the number in {name} as plain digits")
-        _check_expression(statement.value, owner)
+        _check_expression(statement.value, owner, seen - set(FUNCTIONS), source)
+        if line.strip() != f"{name} = {ast.get_source_segment(source, statement.value)}":
+            raise EquationFormError(f'{owner}: write "{name} = " and the expression alone, without brackets around all '
+                                    "of it")
         seen.add(name)
     first = statements[0].lineno - 1
     if len(lines) > statements[-1].end_lineno or any(
