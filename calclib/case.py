@@ -4,7 +4,7 @@ import hashlib
 import json
 import os
 import tempfile
-from dataclasses import dataclass, field
+from dataclasses import dataclass
 from pathlib import Path
 
 import yaml
@@ -118,8 +118,8 @@ def parse(content, name="the case"):
 
 def _revisions(rows, name):
     if not isinstance(rows, list) or not all(
-            isinstance(row, dict) and set(row) == set(REVISION_COLUMNS) and all(isinstance(v, str) for v in row.values())
-            for row in rows):
+            isinstance(row, dict) and set(row) == set(REVISION_COLUMNS)
+            and all(isinstance(cell, str) for cell in row.values()) for row in rows):
         raise CalcError(f"{name}: each line of revisions needs exactly: {', '.join(REVISION_COLUMNS)}.")
     return tuple(tuple(row[key] for key in REVISION_COLUMNS) for row in rows)
 
