@@ -57,6 +57,11 @@ def mathml(texts):
 def _pandoc(texts, to):
     if not texts:
         return []
+    for text in texts:
+        if not text.strip():
+            _refuse(text)
+    # One line each, as TeX reads it: a comment ends with its line, and a line end is a space.
+    texts = [" ".join(re.sub(r"(?<!\\)%[^\n]*", "", text).split()) for text in texts]
     blocks = [{"t": "Para", "c": [{"t": "Math", "c": [{"t": "InlineMath"}, text]}]} for text in texts]
     tree = json.dumps({"pandoc-api-version": [1, 23], "meta": {}, "blocks": blocks})
     made = pypandoc.convert_text(tree, to, format="json", extra_args=["--mathml", "--wrap=none"])

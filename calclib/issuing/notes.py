@@ -14,7 +14,7 @@ from calclib.errors import CalcError
 from calclib.issuing import mathematics
 
 _READER = ("markdown-raw_html-raw_tex-raw_attribute-native_divs-native_spans-citations-example_lists-fenced_divs"
-           "-bracketed_spans-yaml_metadata_block-pandoc_title_block-smart+lists_without_preceding_blankline"
+           "-bracketed_spans-yaml_metadata_block-pandoc_title_block-smart-implicit_figures+lists_without_preceding_blankline"
            "-blank_before_header+tex_math_dollars")
 
 
@@ -114,8 +114,9 @@ def _runs(inlines, pictures, **marks):
         elif kind == "Math":
             runs.append({"latex": content[1]})
         elif kind == "Link":
-            runs += _runs(content[1], pictures, **marks)
-            if content[2][0] not in "".join(run.get("text", "") for run in runs):
+            words = _runs(content[1], pictures, **marks)
+            runs += words
+            if content[2][0] not in "".join(run.get("text", "") for run in words):
                 runs.append({"text": f" ({content[2][0]})", **marks})
         elif kind == "Image":
             runs.append(_picture(content, pictures))
@@ -125,7 +126,7 @@ def _runs(inlines, pictures, **marks):
 
 
 def _picture(content, pictures):
-    alt, target = " ".join(_all_text(content[1])), content[2][0]
+    alt, target = "".join(_all_text(content[1])), content[2][0]
     stored = pictures.get(target.removeprefix("attachment:"))
     if target.startswith("attachment:") and stored and stored[0] == "image/png":
         return {"png": base64.b64encode(stored[1]).decode(), "alt": alt or "Picture in a note"}

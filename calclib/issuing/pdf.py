@@ -10,7 +10,6 @@ import tempfile
 from contextlib import contextmanager
 from datetime import UTC, date, datetime, time
 from functools import lru_cache
-from importlib.util import find_spec
 from pathlib import Path
 
 import typst
@@ -60,16 +59,45 @@ def _compiler(document, attachments):
             data["attachments"].append({"name": file_name, "mime": mime, "description": description, "file":
                                         f"attachment-{i}",
                                         "relation": "data" if mime == "application/json" else "source"})
+        lacking = set()
+        data = _with_glyphs(data, lacking)
+        data["lacking"] = bool(lacking)
         (folder / "data.json").write_text(json.dumps(data), encoding="utf-8", newline="\n")
         yield typst.Compiler(str(folder / "calc.typ"), root=name, font_paths=_fonts(), ignore_system_fonts=True)
+
+
+def _font_folder():
+    import matplotlib  # slow to import, and loaded already where a figure was drawn
+    return Path(matplotlib.get_data_path()) / "fonts" / "ttf"
 
 
 @lru_cache(1)
 def _fonts():
     """Return the fonts of the Typst wheel, and those of matplotlib for signs that they lack."""
-    # Found without importing matplotlib, which takes longer than a whole PDF.
-    folder = Path(find_spec("matplotlib").origin).parent / "mpl-data" / "fonts" / "ttf"
-    return typst.Fonts(include_system_fonts=False, font_paths=[folder])
+    return typst.Fonts(include_system_fonts=False, font_paths=[_font_folder()])
+
+
+@lru_cache(1)
+def _glyphs():
+    """Return the code points that every style of text can print: those of the last font that is tried."""
+    from matplotlib.ft2font import FT2Font
+    return frozenset(FT2Font(str(_font_folder() / "DejaVuSans.ttf")).get_charmap())
+
+
+def _with_glyphs(value, lacking):
+    """Return `value` with each character that no font has as its Unicode number, and add it to `lacking`.
+
+    A box would read as any character at all, on paper and when the text is copied.
+    """
+    if isinstance(value, str):
+        lacks = {c for c in value if not c.isascii() and ord(c) not in _glyphs()}
+        lacking |= lacks
+        return "".join(f"\u27e8U+{ord(c):04X}\u27e9" if c in lacks else c for c in value) if lacks else value
+    if isinstance(value, list):
+        return [_with_glyphs(each, lacking) for each in value]
+    if isinstance(value, dict):
+        return {name: _with_glyphs(each, lacking) for name, each in value.items()}
+    return value
 
 
 def _timestamp(document):

@@ -1,4 +1,4 @@
-"""A document and a notebook of an invented calc, with every kind of node and with texts that try to be more than text."""
+"""A document of an invented calc, with every kind of node and with texts that try to be more than text."""
 
 HOSTILE = ('#eval("1")', "$x$", "<script>alert(1)</script>", "*a*", "=cmd|' /C calc'!A0", "\\input{x}", "`code`", "a|b")
 HEAD = {
@@ -69,8 +69,8 @@ def _block(number):
         equation("P_{n}", r"0.6 \cdot C_{r} \cdot F_{u} \cdot A_{sf}",
                  r"0.6 \cdot 1 \cdot 65\ \mathrm{ksi} \cdot 2.750\ \mathrm{in}^{2}", r"107.3\ \mathrm{kip}",
                  "AISC 360-22 D5.1(b), Eq. D5-2"),
-        equation(r"\phi P_{n}", r"\phi \cdot P_{n}", r"0.75 \cdot 107.3\ \mathrm{kip}", rf"80.{number}4\ \mathrm{{kip}}",
-                 "AISC 360-22 D5.1"),
+        equation(r"\phi P_{n}", r"\phi \cdot P_{n}", r"0.75 \cdot 107.3\ \mathrm{kip}",
+                 rf"80.{number}4\ \mathrm{{kip}}", "AISC 360-22 D5.1"),
         {"type": "text", "text": "Ratio 0.710: acceptable."}]}
 
 
@@ -114,7 +114,8 @@ def document(fails=False, page="letter", **head):
     ]
     verdict = "Bearing governs: available strength 33.75 kip, required 24.00 kip, ratio 0.712."
     if fails:
-        verdict = "Bearing governs: available strength 33.75 kip, required 43.90 kip, ratio 1.301. NOT ACCEPTABLE: bearing."
+        verdict = ("Bearing governs: available strength 33.75 kip, required 43.90 kip, ratio 1.301. NOT ACCEPTABLE: "
+                   "bearing.")
     return {"title": "Pin-connected plate", "head": {**HEAD, **head}, "page": page,
             "basis": "AISC 360-22, LRFD, US customary units (kip, in, ksi)", "digest": "3f9a0c1d22e4",
             "version": "calclib 0.1.0", "verdict": {"passes": not fails, "text": verdict}, "sections": sections}
