@@ -181,7 +181,9 @@ def _figure(node, formulas):
     mime, content = ("image/svg+xml", base64.b64encode(node["svg"].encode()).decode()) if node["svg"] else \
         ("image/png", node["png"])
     caption = f"<figcaption>{_text(node['caption'])}</figcaption>" if node["caption"] else ""
-    return (f'<figure><img alt="{escape(node["alt"])}" style="width:{100 * min(float(node["width"]), 1):.1f}%" '
+    # A figure of full width keeps the size it was drawn in where that fits, so that a scale stays true.
+    width = "auto" if node["width"] >= 1 else f"{100 * float(node['width']):.1f}%"
+    return (f'<figure><img alt="{escape(node["alt"])}" style="width:{width}" '
             f'src="data:{mime};base64,{escape(content)}">{caption}</figure>')
 
 
