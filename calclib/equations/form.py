@@ -160,7 +160,7 @@ def _body(function):
             raise EquationFormError(f'{owner}: write "{name} = " and the expression alone, without brackets around all '
                                     "of it")
         seen.add(name)
-    first = statements[0].lineno - 1
+    first = tree.body[0].end_lineno
     if len(lines) > statements[-1].end_lineno or any(
             "#" in line for line in lines[first:statements[-1].lineno]):
         raise EquationFormError(f"{owner}: no comments among the lines of an equation")
