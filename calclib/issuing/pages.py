@@ -9,7 +9,8 @@ from calclib.bundles import CALC, SECTION
 from calclib.errors import CalcError
 from calclib.issuing import notes
 
-_LEFT_OUT = {"remove-cell", "remove_cell"}
+_LEFT_OUT = {"remove-cell", "remove_cell", "workbook"}  # "workbook": what every notebook of a kind says on screen
+_NOTES = object()  # in the place of a digest: notes above the first section, which hold no number of the calc
 _NO_OUTPUT = {"remove-output", "remove_output"}
 _WIDGET = "application/vnd.jupyter.widget-view+json"
 _CARRIED = {
@@ -28,7 +29,7 @@ def document_of(notebook):
     """Return (document, case as YAML text, record) of an executed notebook.
 
     Sections stand in the order of the cells. A Markdown cell and an ordinary output follow the section that they stand
-    below; a cell tagged ``remove-cell`` is left out.
+    below, so that a note is never lost; a cell tagged ``remove-cell`` or ``workbook`` is left out.
 
     Raises
     ------
@@ -65,8 +66,8 @@ def _refuse_failure(output, number):
 
 def _refuse_stale(document, sections):
     for section in sections:
-        digest = section.pop("digest", document["digest"])
-        if digest != document["digest"]:
+        digest = section.pop("digest", "unknown")
+        if digest not in (document["digest"], _NOTES):
             raise CalcError(f"the section \"{section['title']}\" was made from inputs {digest} and the calc from "
                             f"{document['digest']}. Run all cells again; nothing was exported.")
 
@@ -76,8 +77,7 @@ def _add_section(sections, section):
     for node in section["nodes"]:
         if node["type"] not in NODE_TYPES:
             raise CalcError(f"the section \"{section['title']}\" holds \"{node['type']}\", which no page can show.")
-    same = sections and sections[-1]["key"] == section["key"]
-    if same and sections[-1].get("digest") == section.get("digest"):
+    if sections and sections[-1]["key"] == section["key"] and sections[-1].get("digest") == section.get("digest"):
         sections[-1]["nodes"] += section["nodes"]
     else:
         sections.append({**section, "nodes": list(section["nodes"])})
@@ -85,7 +85,7 @@ def _add_section(sections, section):
 
 def _add_nodes(sections, nodes):
     if nodes and not sections:
-        sections.append({"key": "notes", "title": "Notes", "nodes": []})
+        sections.append({"key": "notes", "title": "Notes", "digest": _NOTES, "nodes": []})
     if nodes:
         sections[-1]["nodes"] += nodes
 

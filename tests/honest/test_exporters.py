@@ -290,7 +290,7 @@ def notebook():
     said = document()
     cells = []
     for section in said["sections"]:
-        data = {"text/plain": section["title"], SECTION: section}
+        data = {"text/plain": section["title"], SECTION: {**section, "digest": said["digest"]}}
         cells.append(new_code_cell("book.show(...)", execution_count=1, outputs=[new_output("display_data", data)]))
     cells[3].outputs.append(new_output("display_data", {"text/plain": "a twin"}, metadata={"calclib": "twin"}))
     cells.insert(4, new_markdown_cell("**Note** by hand: $x \\le 3$, <script>alert(1)</script>",
@@ -298,6 +298,7 @@ def notebook():
     cells.insert(5, new_code_cell("print(...)", execution_count=2, outputs=[
         new_output("stream", name="stdout", text="printed \x1b[31mred\x1b[0m words")]))
     cells.append(new_markdown_cell("Buttons of the screen", metadata={"tags": ["remove-cell"]}))
+    cells.insert(0, new_markdown_cell("Buttons of the screen", metadata={"tags": ["workbook"]}))
     closing = {"document": {k: v for k, v in said.items() if k != "sections"}, "record": {"format": "calclib record 1"},
                "case": "kind: \"pin_plate\"\n"}
     cells.append(new_code_cell("book.close()", execution_count=3,
@@ -322,12 +323,19 @@ def test_a_notebook_gives_back_its_document():
 
 def test_a_section_in_several_outputs_is_one_section():
     book = notebook()
-    data = book.cells[0].outputs[0].data
+    data = book.cells[1].outputs[0].data
     rest = copy.deepcopy(data)
     rest[SECTION]["nodes"] = [{"type": "text", "text": "more"}]
-    book.cells[0].outputs.append(new_output("display_data", rest))
+    book.cells[1].outputs.append(new_output("display_data", rest))
     first = pages.document_of(book)[0]["sections"][0]
     assert [node["type"] for node in first["nodes"]] == ["strengths", "text"]
+
+
+def test_a_note_above_the_first_section_is_carried():
+    book = notebook()
+    book.cells.insert(0, new_markdown_cell("Read this first"))
+    first = pages.document_of(book)[0]["sections"][0]
+    assert (first["title"], first["nodes"][0]["text"]) == ("Notes", "Read this first")
 
 
 @pytest.mark.parametrize(("name", "begin"), [("calc-pdf", b"%PDF-1.7"), ("calc-html", b"<!DOCTYPE html>")])
@@ -365,15 +373,17 @@ def test_other_notebooks_are_refused():
     twice.cells.append(twice.cells[-1])
     assert refused(twice) == "the notebook holds 2 calcs; a calc is one notebook."
     failed = notebook()
-    failed.cells[2].outputs = [new_output("error", ename="ValueError", evalue="no such plate.", traceback=[])]
-    assert refused(failed) == ("cell 3 failed with ValueError: no such plate. Mend it and run all cells; "
+    failed.cells[3].outputs = [new_output("error", ename="ValueError", evalue="no such plate.", traceback=[])]
+    assert refused(failed) == ("cell 4 failed with ValueError: no such plate. Mend it and run all cells; "
                                "nothing was exported.")
     stale = notebook()
-    stale.cells[1].outputs[0].data[SECTION]["digest"] = "000000000000"
+    stale.cells[2].outputs[0].data[SECTION]["digest"] = "000000000000"
     assert refused(stale) == ('the section "Scope" was made from inputs 000000000000 and the calc from 3f9a0c1d22e4. '
                               "Run all cells again; nothing was exported.")
+    del stale.cells[2].outputs[0].data[SECTION]["digest"]
+    assert refused(stale).startswith('the section "Scope" was made from inputs unknown and the calc from')
     strange = notebook()
-    strange.cells[1].outputs[0].data[SECTION]["nodes"] = [{"type": "raw"}]
+    strange.cells[2].outputs[0].data[SECTION]["nodes"] = [{"type": "raw"}]
     assert refused(strange) == 'the section "Scope" holds "raw", which no page can show.'
 
 
