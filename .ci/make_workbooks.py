@@ -14,7 +14,7 @@ import nbformat
 from nbclient import NotebookClient
 
 from calclib.document import SECTIONS
-from calclib.issuing.issue import _as_issued
+from calclib.issuing.issue import QUIET, _as_issued
 from calclib.members import KINDS
 
 FOLDER = Path(__file__).parent.parent / "workbooks"
@@ -71,7 +71,7 @@ def main(names):
     os.environ["CALCLIB_BATCH"] = "1"
     for name in names or KINDS:
         notebook = workbook(KINDS[name])
-        client = NotebookClient(notebook, kernel_name="python3", record_timing=False,
+        client = NotebookClient(notebook, kernel_name="python3", record_timing=False, extra_arguments=QUIET,
                                 resources={"metadata": {"path": str(FOLDER)}})
         client.execute()
         nbformat.write(_as_issued(notebook), FOLDER / f"{name}.ipynb")

@@ -15,7 +15,7 @@ def bundles(section, stamp):
     made, rest = [], []
     for node in section["nodes"]:
         if node["type"] == "figure":
-            made.append(_bundle(section, [node], {"image/png": node["png"], "text/plain": node["alt"]}))
+            made.append(_bundle(section, stamp, [node], {"image/png": node["png"], "text/plain": node["alt"]}))
         else:
             rest.append(node)
     if rest:
@@ -24,13 +24,13 @@ def bundles(section, stamp):
         else:
             public = {"text/markdown": markdown(section["title"], rest, stamp)}
         plain = plain_text(section["title"], rest)
-        made.insert(0, _bundle(section, rest, {**public, "text/plain": plain}))
+        made.insert(0, _bundle(section, stamp, rest, {**public, "text/plain": plain}))
     return made
 
 
-def _bundle(section, nodes, public):
+def _bundle(section, stamp, nodes, public):
     kept = [{k: v for k, v in node.items() if k != "png" or not node.get("svg")} for node in nodes]
-    return {**public, SECTION: {"key": section["key"], "title": section["title"], "nodes": kept}}
+    return {**public, SECTION: {"key": section["key"], "title": section["title"], "digest": stamp, "nodes": kept}}
 
 
 # --- LaTeX ------------------------------------------------------------------------------------------------------

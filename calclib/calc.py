@@ -77,8 +77,8 @@ class Block:
     def limit_state(self, factors, nominal, symbol, clause, advisory=False):
         """Close the block as a limit state: available strength and ratio by the method of the design basis."""
         run = self.run
-        self.factors, self.nominal, self.clause, self.advisory = factors, nominal, clause, advisory
-        self.cite = run.cite(clause)
+        self.factors, self.nominal, self.advisory = factors, nominal, advisory
+        self.clause, self.cite = run.clause(clause), run.cite(clause)
         if run.method == "LRFD":
             self.available = self(design.design_strength, phi=factors.phi, R_n=nominal,
                                   symbols={"R_n": symbol, "phiR_n": rf"\phi {symbol}"})
@@ -157,11 +157,13 @@ class Run:
         self.blocks, self.rules, self.messages, self.assumptions = [], [], [], []
         self.outside = False      # with arrays: where no number exists
 
+    def clause(self, clause):
+        """Return the clause of the edition; a dict gives one for each."""
+        return clause[self.edition] if isinstance(clause, dict) else clause
+
     def cite(self, clause):
-        """Return the clause with document and edition; a dict gives one for each edition."""
-        if isinstance(clause, dict):
-            clause = clause[self.edition]
-        return f"{self.document}-{self.edition} {clause}"
+        """Return the clause of the edition with its document."""
+        return f"{self.document}-{self.edition} {self.clause(clause)}"
 
     def pair(self, constants):
         """Return the constant of the unit set, as the standard prints it."""

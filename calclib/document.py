@@ -210,7 +210,7 @@ def inputs(calc):
         typed = calc.case.texts.get(each.name, "").strip()
         read = _value(calc, each)
         if typed or read:
-            rows.append([each.name, each.label, typed or "(default)", read if each.dimension else ""])
+            rows.append([each.name, each.label, typed or "(default)", read if each.dimension or not typed else ""])
     return [_section("inputs", "Inputs", [_table(
         [("Input", "left"), ("Meaning", "left"), ("As typed", "left"), ("As read", "right")], rows)])]
 

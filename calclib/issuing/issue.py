@@ -18,6 +18,8 @@ from calclib.errors import CalcError
 # The running kernel is emptied and moved to the folder of the calc before each workbook.
 _CLEAN = "get_ipython().reset(new_session=True)\nimport os as _os\n_os.environ['CALCLIB_BATCH'] = '1'\n_os.chdir({!r})"
 
+QUIET = ["--log-level=ERROR"]  # the kernel otherwise warns of plain TCP, which never leaves this machine here
+
 
 def workbook_of(kind):
     """Return the path of the workbook of a kind: beside the package in a checkout, inside it when installed."""
@@ -93,7 +95,8 @@ class Issuer:
         with tempfile.TemporaryDirectory(prefix="calc-") as folder:
             (Path(folder) / case_name).write_text(content, encoding="utf-8", newline="\n")
             if self._client is None:
-                self._client = NotebookClient(notebook, kernel_name="python3", record_timing=False, timeout=120)
+                self._client = NotebookClient(notebook, kernel_name="python3", record_timing=False, timeout=120,
+                                              extra_arguments=QUIET)
             client = self._client
             client.nb = notebook
             client.reset_execution_trackers()

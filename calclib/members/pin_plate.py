@@ -155,12 +155,12 @@ def _rules(x, run, clearance, sides, a_min, w_min, w_min_uncapped):
              remark="The hole is off the centre line of the plate; relocate it or widen the plate on the short side.",
              tolerance=run.pair(CENTRING), b1=sides[0], b2=sides[1])
     run.rule("clearance", "Clearance of hole and pin", "D5.2(b)", _at_most(clearance, allowed),
-             "d_h - d at most {allowed}", "{clearance}", applies=x.movement == YES,
+             "at most {allowed}", "{clearance}", applies=x.movement == YES,
              remark="Use a hole of at most {largest}.", reason="no relative movement is expected at the pin",
              allowed=allowed, clearance=clearance, largest=x.pin_diameter + allowed)
     run.rule("width", "Width at the pin", "D5.2(c)", x.plate_width >= w_min * (1 - 1e-9), "w at least {w_min}",
              "{w}", remark="Widen the plate.", w_min=w_min, w=x.plate_width)
-    run.rule("width before the limit", "Width at the pin, b_e before the limit by the edge", "D5.2(c)",
+    run.rule("width before the limit", "Width at the pin, before the limit by the edge", "D5.2(c)",
              x.plate_width >= w_min_uncapped * (1 - 1e-9), "w at least {w_min}, as advice", "{w}", severity="caution",
              remark="the plate is narrower than the full effective width would use; the limited width is used "
                     "throughout.", w_min=w_min_uncapped, w=x.plate_width)
@@ -201,7 +201,7 @@ def sketch(x, calc):
     r, a, w, t = x.hole_diameter / 2, x.end_distance, x.plate_width, x.plate_thickness
     b_1 = (w - 2 * r) / 2 if x.side_distance is None else x.side_distance
     left, right, top, bottom = -r - b_1, w - r - b_1, r + a, -r - max(w, 2 * a) * 0.75
-    side = right + max(0.35 * w, 3 * t)          # left face of the side view
+    side = right + max(0.8 * w, 3 * t)          # left face of the side view
     parts = [
         Outline([(left, bottom), *_end(left, right, top, r, x.corner_distance), (right, bottom)], closed=False),
         BreakLine((left, bottom), (right, bottom)),
@@ -259,9 +259,9 @@ def _failure_path(x, calc, r, left, right, top, bottom):
 
 
 def _hole_range(x):
-    """Return hole diameters from the pin's own to the largest that the edition covers."""
-    return {"hole_diameter": np.linspace(x.pin_diameter, x.pin_diameter + CLEARANCE[x.units][
-        1 if x.standard.endswith("22") else 0], 200)}
+    """Return hole diameters from the pin's own to somewhat beyond the largest that the clause covers."""
+    large = CLEARANCE[x.units][1]
+    return {"hole_diameter": np.linspace(x.pin_diameter, x.pin_diameter + 1.5 * large, 199)}
 
 
 PLOTS = (

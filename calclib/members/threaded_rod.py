@@ -10,7 +10,7 @@ from calclib.members.fields import Field, Kind, Plot
 from calclib.sketch import Arrow, Break, Dimension, Drawing, Leader, Named, Outline
 from calclib.tables import threads as threads_of
 
-BODY_RULE, STRESS_AREA_RULE = "0.75 F_u on body area", "F_u on tensile stress area"
+BODY_RULE, STRESS_AREA_RULE = "0.75 Fu on body area", "Fu on tensile stress area"
 INCH_SERIES = ("UNC", "UNF", "8UN")
 SERIES = (*INCH_SERIES, "ISO coarse", "ISO fine")
 LEAST_DIAMETER = {"US": 0.625, "SI": 16.0}     # common practice for rods that carry main loads
@@ -25,7 +25,7 @@ FIELDS = (
     Field("F_u", "Tensile strength", "Rod", "Specified minimum tensile strength.", "F_u", units.STRESS, above=0),
     Field("rod_diameter", "Rod diameter", "Rod", "Nominal diameter of body and thread.", "d", units.LENGTH, above=0),
     Field("thread_series", "Thread series", "Rod", "Standard series that gives the pitch.", choices=SERIES),
-    Field("pitch", "Pitch", "Rod",
+    Field("pitch", "Thread pitch", "Rod",
           "Only where the series has two pitches for the size, or the thread is special: threads per inch such as "
           "\"8 tpi\" in US units, pitch such as \"2.5 mm\" in SI.", "P", units.PITCH, optional=True, above=0),
     Field("strength_rule", "Strength rule", "Rod",
@@ -72,12 +72,12 @@ def evaluate(x, run):
     P_n = part(members.tensile_yielding, F_y=x.F_y, A_g=A_b, symbols={"A_g": "A_{b}"})
     part.limit_state(YIELDING, P_n, "P_{n}", "D2(a)")
 
-    part = run.block("thread, body area", "Tensile strength of the thread, 0.75 F_u on the body area")
+    part = run.block("thread, body area", "Thread strength by body area, 0.75 Fu Ab")
     R_n = part(rods.tensile_strength_on_body_area, F_u=x.F_u, A_b=A_b)
     part.limit_state(RUPTURE, R_n, "R_{n}", {"22": "J3.7, Table J3.2", "16": "J3.6, Table J3.2"},
                      advisory=x.strength_rule != BODY_RULE)
 
-    part = run.block("thread, stress area", "Tensile strength of the thread, F_u on the tensile stress area")
+    part = run.block("thread, stress area", "Thread strength by stress area, Fu At")
     if run.edition == "22":
         R_n = part(rods.tensile_strength_on_stress_area, F_u=x.F_u, A_t=A_t)
         part.limit_state(RUPTURE, R_n, "R_{n}", "J3.7, Table J3.2 note b", advisory=x.strength_rule != STRESS_AREA_RULE)
@@ -262,7 +262,7 @@ def _present_pitch(x):
 
 def _standard_pitches(x):
     """Return the standard pitches of this diameter in every series of the unit set, to mark along the axis."""
-    return [(_standard_pitch(thread), series) for series in SERIES
+    return [(_standard_pitch(thread), f"{_standard_pitch(thread):g} {series}") for series in SERIES
             if (series in INCH_SERIES) == (x.units == units.US)
             for thread in threads_of(series) if abs(thread.d - x.rod_diameter) < 1e-6 * thread.d]
 
