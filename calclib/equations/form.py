@@ -124,7 +124,8 @@ def _check_expression(node, owner, known, source):
             written = ast.get_source_segment(source, part)
             if not re.fullmatch(r"\d+(\.\d+)?", written):
                 raise EquationFormError(f"{owner}: write the number {written} as plain digits")
-    if isinstance(node, (ast.Name, ast.Constant)):
+    names = {part.id for part in ast.walk(node) if isinstance(part, ast.Name)} - {"pi", *FUNCTIONS}
+    if isinstance(node, (ast.Name, ast.Constant)) or not names:
         raise EquationFormError(f"{owner}: a bare name or number is not shown as an equation")
     if isinstance(node, ast.UnaryOp):
         raise EquationFormError(f"{owner}: an equation that is one negative term is not shown; write it as a product "

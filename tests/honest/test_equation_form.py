@@ -99,6 +99,8 @@ def refusal(*arguments, **more):
     # what is no equation
     ("y = a", "written: a bare name or number is not shown as an equation"),
     ("y = 2.5", "written: a bare name or number is not shown as an equation"),
+    ("y = 2 * 2.5", "written: a bare name or number is not shown as an equation"),
+    ("y = pi / 2", "written: a bare name or number is not shown as an equation"),
     ("y = (a)", "written: a bare name or number is not shown as an equation"),
     ("y = -a", "written: an equation that is one negative term is not shown; write it as a product or a difference"),
     ("y = -(a + b)", "written: an equation that is one negative term is not shown; write it as a product or a "
