@@ -1,8 +1,12 @@
 """What all tests share."""
 
+import hypothesis
 import pytest
 
 from calclib.equations import form
+
+hypothesis.settings.register_profile("calclib", deadline=None)   # the first example pays for imports
+hypothesis.settings.load_profile("calclib")
 
 
 def pytest_configure(config):

@@ -85,7 +85,7 @@ def is_wrong(line, known):
 
 @pytest.mark.parametrize("name", DEMOS)
 def test_an_altered_digit_of_a_result_does_not_come_out(name):
-    """Every digit but the last; and the last one in half of the lines, where the rounding of the inputs leaves no room."""
+    """Every digit but the last; the last one too in half of the lines, where the digits put in leave no room."""
     known, last_caught, last = {}, 0, 0
     for lhs, symbolic, substituted, result in lines(VARIANTS[name]):
         if symbolic:

@@ -200,7 +200,7 @@ def _sparing(text):
     return ast.unparse(ast.parse(text, mode="eval").body)
 
 
-@settings(max_examples=25, deadline=None)
+@settings(max_examples=25)
 @given(st.tuples(st.recursive(_LEAVES, _longer, max_leaves=5), st.sampled_from("+-*/"),
                  st.recursive(_LEAVES, _longer, max_leaves=4)))
 def test_the_renderer_reads_every_allowed_form_as_python_does(parts):

@@ -5,7 +5,8 @@ from printed import Printed, published
 
 from calclib.equations import threads
 from calclib.equations.aisc360 import rods
-from calclib.tables import PRINTED, threads as threads_of
+from calclib.tables import PRINTED
+from calclib.tables import threads as threads_of
 
 # Printed areas that no formula gives to the last digit; test_thread_tables.py says why and by how little.
 OFF = ("5/16-24 UNF", "1/2-20 UNF", "M48")
