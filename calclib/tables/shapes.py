@@ -1,7 +1,8 @@
 """Rolled shapes and hollow sections of the AISC Shapes Database v16.0 (16th-edition Manual), in inches.
 
-Where each number was read stands in the TOML beside each CSV. All shapes load in some tens of milliseconds, because the
-files are read here without the checks of `calclib.tables.table`; a test makes those checks on the same files.
+Where each number was read stands in the TOML beside each CSV. The files are read here without the checks of
+`calclib.tables.table`, and a Shape is made when it is asked for, so that a form with all names opens at once; a test
+makes those checks on the same files.
 """
 
 import csv
@@ -116,31 +117,55 @@ class Shape:
 
 
 def family(name):
-    """Return which of FAMILIES a designation belongs to; a rectangular hollow section counts as rectangular."""
+    """Return which of FAMILIES a designation belongs to.
+
+    >>> family("HSS6x4x3/8"), family("HSS6.000x0.500"), family("Pipe4STD")
+    ('HSS rectangular', 'HSS round', 'PIPE')
+    """
     prefix = _PREFIX.match(name)[0].upper()
-    if prefix == "HSS":
-        return "HSS round" if name.count("x") == 1 else "HSS rectangular"
-    return prefix
+    if prefix != "HSS":
+        return prefix
+    height, width, *wall = name[3:].split("x")
+    return "HSS round" if not wall else "HSS square" if height == width else "HSS rectangular"
 
 
 @cache
-def _all():
-    """Return all shapes by designation, in the order of the families."""
+def _lines():
+    """Return the header and the cells of each shape by its designation, in the order of FAMILIES."""
     found = {}
-    doubts = {row["name"]: f"the tabulated area is {row['printed']['A']} in2, but diameter and design wall give "
-                           f"{row['printed']['A_from_dimensions']} in2" for row in table("shapes_doubtful").rows}
-    folder = files("calclib.tables")
     for file in _FILES:
-        header, *lines = csv.reader((folder / f"{file}.csv").read_text(encoding="utf-8").splitlines(), strict=True)
-        converters = [str if column in _TEXT else _float for column in header]
-        for line in lines:
-            row = {column: convert(text) for column, convert, text in zip(header, converters, line, strict=True)
-                   if text}
-            row["family"] = family(row["name"])
-            _complete(row, found)
-            found[row["name"]] = Shape(doubt=doubts.get(row["name"], ""), **row)
+        header, *lines = csv.reader((files("calclib.tables") / f"{file}.csv").read_text(encoding="utf-8").splitlines(),
+                                    strict=True)
+        found.update((line[0], (header, line)) for line in lines)
     order = {name: place for place, name in enumerate(FAMILIES)}
-    return dict(sorted(found.items(), key=lambda item: order[item[1].family]))
+    return {name: found[name] for name in sorted(found, key=lambda name: order[family(name)])}
+
+
+@cache
+def _shape(name):
+    """Return the Shape of a designation spelled as in the table."""
+    header, line = _lines()[name]
+    row = {column: text if column in _TEXT else _float(text)
+           for column, text in zip(header, line, strict=True) if text}
+    kind = family(name)
+    if kind == "2L":
+        angle = _shape(row["parent"])
+        row.update(x=angle.y if row["backs"] == "short legs" else angle.x, leg_long=angle.leg_long,
+                   leg_short=angle.leg_short, r_z=angle.r_z)
+    elif kind in ("WT", "MT", "ST"):
+        row["parent_depth"] = _shape(row["parent"]).d
+    elif kind in ("HSS round", "PIPE"):
+        row.update(r_y=row["r_x"], Z_y=row["Z_x"], doubt=_doubts().get(name, ""))
+        if kind == "HSS round":
+            # The table prints three digits, 12.8 for 12.750.
+            row["D"] = float(name[3:].split("x")[0])
+    return Shape(family=kind, **row)
+
+
+@cache
+def _doubts():
+    return {row["name"]: f"the tabulated area is {row['printed']['A']} in2, but diameter and design wall give "
+                         f"{row['printed']['A_from_dimensions']} in2" for row in table("shapes_doubtful").rows}
 
 
 @cache                               # the same few thousand texts come again and again
@@ -148,42 +173,21 @@ def _float(text):
     return float(sum(map(Fraction, text.split("-")))) if "/" in text else float(text)
 
 
-def _complete(row, found):
-    """Add to a row what follows from its designation or from its parent, a shape found before."""
-    kind = row["family"]
-    if kind == "2L":
-        angle = found[row["parent"]]
-        back, out = (angle.y, angle.x) if row["backs"] == "short legs" else (angle.x, angle.y)
-        row.update(x=back, leg_long=angle.leg_long, leg_short=angle.leg_short, r_z=angle.r_z)
-        row.setdefault("y", out)
-    elif kind in ("WT", "MT", "ST"):
-        row["parent_depth"] = found[row["parent"]].d
-    elif kind in ("HSS round", "PIPE"):
-        row.update(r_y=row["r_x"], Z_y=row["Z_x"])
-        if kind == "HSS round":
-            # The table prints three digits, 12.8 for 12.750.
-            row["D"] = float(row["name"][3:].split("x")[0])
-    elif kind == "HSS rectangular" and row["H"] == row["B"]:
-        row["family"] = "HSS square"
-
-
-def shapes(family=None):
+def shapes(family_name=None):
     """Return the Shapes of one of FAMILIES, or all of them.
 
     >>> len(shapes()), shapes("HP")[-1].name
     (2299, 'HP8x36')
     """
-    if family is None:
-        return tuple(_all().values())
-    if family not in FAMILIES:
-        raise TableError(f'there is no family of shapes "{family}"; there are {", ".join(FAMILIES)}.')
-    return tuple(shape for shape in _all().values() if shape.family == family)
+    if family_name not in (None, *FAMILIES):
+        raise TableError(f'there is no family of shapes "{family_name}"; there are {", ".join(FAMILIES)}.')
+    return tuple(_shape(name) for name in names() if family_name in (None, family(name)))
 
 
 @cache
 def names():
     """Return the designations of all shapes, for a search while typing."""
-    return tuple(_all())
+    return tuple(_lines())
 
 
 def shape(name):
@@ -194,18 +198,24 @@ def shape(name):
     >>> shape("HSS 6 x 0.500").name
     'HSS6.000x0.500'
     """
-    known = _all()
-    if name in known:
-        return known[name]
+    if name in _lines():
+        return _shape(name)
+    if spelled := _by_capitals().get(name.upper()):
+        return _shape(spelled)
     key = _key(name)
     if key in _by_key():
-        return _by_key()[key]
+        return _shape(_by_key()[key])
     raise TableError(f'shape: "{name}" is not in the {SOURCE}; the nearest are {", ".join(_nearest(name, key))}.')
 
 
 @cache
+def _by_capitals():
+    return {name.upper(): name for name in names()}
+
+
+@cache
 def _by_key():
-    return {_key(shape.name): shape for shape in _all().values()}
+    return {_key(name): name for name in names()}
 
 
 def _key(name):
@@ -236,10 +246,10 @@ def _nearest(typed, key):
     if key and None not in key[1]:
         prefix, sizes, suffix = key
         alike = [(sum(abs(float(a - b)) / float(max(a, b, 1)) for a, b in zip(sizes, other[1], strict=True)),
-                  other[2] != suffix, shape.name)
-                 for other, shape in _by_key().items() if other[0] == prefix and len(other[1]) == len(sizes)]
+                  other[2] != suffix, name)
+                 for other, name in _by_key().items() if other[0] == prefix and len(other[1]) == len(sizes)]
         if alike:
             return [name for *_, name in sorted(alike)[:3]]
-    spelled = {name.upper(): name for name in names()}
+    spelled = _by_capitals()
     begin = [name for upper, name in spelled.items() if upper.startswith(typed.strip().upper() + "X")]
     return begin[:3] or [spelled[close] for close in get_close_matches(typed.upper()[:40], list(spelled), 3, 0)]
