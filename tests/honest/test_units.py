@@ -31,7 +31,7 @@ inch_signs = st.sampled_from(["in", "in.", "inch", "inches", '"', "″", "”"])
 foot_signs = st.sampled_from(["'", "′", "’", " ft"])
 
 
-@given(fractions(), st.integers(0, 500), st.sampled_from(["-", " ", " - ", "  ", "–", "−"]), spaces,  # noqa: RUF001
+@given(fractions(), st.integers(0, 500), st.sampled_from(["-", " ", " - ", "  ", "–", "−"]), spaces,
        inch_signs)
 def test_whole_and_fraction(fraction, whole, between, space, sign):
     text, value = fraction
