@@ -174,15 +174,18 @@ class Run:
         return self.blocks[-1]
 
     def require(self, condition, name, problem, **values):
-        """Refuse: no number exists unless `condition` holds. Values in `problem` are lengths [in or mm]."""
+        """Refuse: no number exists unless `condition` holds. Values in `problem` are lengths, or (value, dimension)."""
         if self.arrays:
             self.outside = self.outside | ~np.asarray(condition)
         elif not condition:
             raise EntryError(name, self._words(problem, values))
 
     def _words(self, text, values):
-        return text.format(**{k: v if isinstance(v, str) else units.text(v, units.LENGTH, self.units)
-                              for k, v in values.items()})
+        def word(value):
+            if isinstance(value, str):
+                return value
+            return units.text(*(value if isinstance(value, tuple) else (value, units.LENGTH)), self.units)
+        return text.format(**{name: word(value) for name, value in values.items()})
 
     def message(self, severity, text, cite="", when=True, **values):
         """Add a caution or note where `when` holds; values named in `text` are lengths unless already text."""
@@ -294,12 +297,14 @@ def sweep(case, **arrays):
 
     Raises
     ------
-    CaseErrors, EntryError : the case itself cannot be used.
+    CaseErrors, EntryError : the case itself cannot be used, or the kind has no such input.
     """
     x, _ = read_inputs(case.kind, case.texts)
     arrays = {name: np.asarray(values, float) for name, values in arrays.items()}
     shape = np.broadcast_shapes(*(values.shape for values in arrays.values()))
     run = Run(SimpleNamespace(**{**vars(x), **arrays}), arrays=True)
+    for name, values in arrays.items():
+        run.outside = run.outside | ~case.kind.field(name).allows(values)
     case.kind.evaluate(run.x, run)
     outside = np.broadcast_to(run.outside, shape)
     return [Curve(block.key, block.title, np.where(outside, np.nan, np.broadcast_to(block.available, shape)),

@@ -55,6 +55,12 @@ class Field:
             return f"above {self.above:g}"
         return f"at least {self.least:g}" if self.least is not None else "any text" if not self.dimension else "any"
 
+    def allows(self, value):
+        """Return whether a number, or each of an array, keeps the lower limit of the field; NaN does not."""
+        above = -np.inf if self.above is None else self.above
+        least = -np.inf if self.least is None else self.least
+        return (value > above) & (value >= least)
+
     def read(self, text, unit_set):
         """Return the value that `text` states, or None if blank; raise EntryError if it cannot be used."""
         text = text.strip() or self.default_text(unit_set)
@@ -62,21 +68,22 @@ class Field:
             if self.optional:
                 return None
             example = self.example(unit_set)
+            if self.choices and not self.search:
+                raise EntryError(self.name, f"is empty; choose one of: {', '.join(self.choices)}")
             raise EntryError(self.name, "is empty; " + (f'write {self.label.lower()}' + (
                 f', such as "{example}"' if example else "")))
         if self.choices:
             for choice in self.choices:
                 if choice.lower() == text.lower():
                     return choice
-            raise EntryError(self.name, f'"{text}" is not one of {", ".join(self.choices)}'
+            listed = "the names listed" if self.search else ", ".join(self.choices)
+            raise EntryError(self.name, f'"{text}" is not one of {listed}'
                                         + nearest(text, self.choices))
         if not self.dimension:
             return text
         value = units.read(text, self.dimension, unit_set, self.name)
-        if self.above is not None and not value > self.above:
-            raise EntryError(self.name, f"{text} must be above {self.above:g}")
-        if self.least is not None and not value >= self.least:
-            raise EntryError(self.name, f"{text} must be at least {self.least:g}")
+        if not self.allows(value):
+            raise EntryError(self.name, f"{text} must be {self.allowed()}")
         return value
 
 

@@ -7,6 +7,7 @@ import numpy as np
 from calclib import units
 from calclib.equations.aisc360 import RUPTURE, YIELDING, members, pins
 from calclib.members.fields import NO, YES, Field, Kind, Plot, multiples
+from calclib.members.steel import refuse_stresses
 from calclib.sketch import Arrow, BreakLine, Circle, Dimension, Drawing, FailurePath, Leader, Named, Outline
 
 CLEARANCE = {"US": (1 / 32, 1 / 16), "SI": (1.0, 2.0)}   # D5.1(b), D5.2(b): printed as pairs, in and mm
@@ -124,14 +125,7 @@ def _refuse(x, run, clearance):
     d, d_h, w = x.pin_diameter, x.hole_diameter, x.plate_width
     small, large = run.pair(CLEARANCE)
     limit = large if run.edition == "22" else small
-    run.require(x.F_u > x.F_y, "F_u", "the tensile strength is not above the yield stress; "
-                                      "give the specified minimum values of one grade")
-    for name in ("F_y", "pin_F_y"):
-        low, high = {"US": (20, 150), "SI": (140, 1035)}[run.units]
-        value = getattr(x, name)
-        run.require((value >= low) & (value <= high), name,
-                    f"lies outside {low} to {high} {'ksi' if run.units == 'US' else 'MPa'}, the range of structural "
-                    "steel; check its unit")
+    refuse_stresses(x, run, ("F_y", "pin_F_y"))
     run.require(d_h >= d * (1 - 1e-9), "hole_diameter", "{d_h} is smaller than the pin of {d}; the pin does not enter. "
                 "Enlarge the hole or use a smaller pin", d_h=d_h, d=d)
     run.require(d_h < w, "hole_diameter", "{d_h} is not smaller than the plate of {w}; no plate is left beside the "
@@ -140,7 +134,8 @@ def _refuse(x, run, clearance):
         run.require(x.side_distance + d_h < w, "side_distance", "hole and side distance of {b} reach beyond the edge "
                     "of the plate of {w}; give a smaller side distance or a wider plate", b=x.side_distance, w=w)
     run.require(_at_most(clearance, limit), "hole_diameter",
-                "{d_h} is {clearance} larger than the pin; " + run.cite("D5") + " covers up to {limit}. "
+                "{d_h} is {clearance} larger than the pin; " + run.cite({"22": "D5.1(b)", "16": "D5.2(b)"})
+                + " covers up to {limit}. "
                 "Ream and bush the hole, or use a larger pin", d_h=d_h, clearance=clearance, limit=limit)
 
 

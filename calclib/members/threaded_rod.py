@@ -7,6 +7,7 @@ from calclib.equations import mechanics, threads
 from calclib.equations.aisc360 import RUPTURE, YIELDING, members, rods
 from calclib.errors import EntryError
 from calclib.members.fields import Field, Kind, Plot
+from calclib.members.steel import refuse_stresses
 from calclib.sketch import Arrow, Break, Dimension, Drawing, Leader, Named, Outline
 from calclib.tables import threads as threads_of
 
@@ -53,12 +54,7 @@ FIELDS = (
 
 def evaluate(x, run):
     """Order the equations of a threaded rod; `x` holds one value for each field."""
-    run.require(x.F_u > x.F_y, "F_u", "the tensile strength is not above the yield stress; "
-                                      "give the specified minimum values of one grade")
-    low, high = {"US": (20, 150), "SI": (140, 1035)}[run.units]
-    run.require((x.F_y >= low) & (x.F_y <= high), "F_y",
-                f"lies outside {low} to {high} {'ksi' if run.units == 'US' else 'MPa'}, the range of structural steel; "
-                "check its unit")
+    refuse_stresses(x, run)
     if run.edition == "16" and x.strength_rule == STRESS_AREA_RULE:
         raise EntryError("strength_rule", "AISC 360-16 has no rule on the tensile stress area; it came with "
                                           f'AISC 360-22 Table J3.2. Choose "{BODY_RULE}" or the 2022 edition')
@@ -174,8 +170,8 @@ def _fitting(x, run):
     place = f"{x.rating_source}"
     part.given("R", units.FORCE, x.fitting_rating, place, f"Maker's rating, stated as {x.rating_basis}.")
     part.rated(x.fitting_rating, "R", required, symbol, "maker's rating", place)
-    run.caution(f"The {x.fitting} stands on the maker's rating ({x.rating_basis}); the maker's data sheet goes with the "
-                "submittal. Pin and grip of the fitting on the connected plate are to be checked.")
+    run.caution(f"The {x.fitting} stands on the maker's rating ({x.rating_basis}); the maker's data sheet goes with "
+                "the submittal. Pin and grip of the fitting on the connected plate are to be checked.")
 
 
 def _messages(x, run, A_b, A_t):
