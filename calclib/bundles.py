@@ -3,6 +3,8 @@
 The public form reads truly in any notebook viewer, trusted or not; the private form is what the exporters lay out.
 """
 
+import hashlib
+import json
 import re
 
 SECTION = "application/vnd.calclib.section+json"
@@ -10,15 +12,23 @@ CALC = "application/vnd.calclib.calc+json"
 _BAR = 20
 
 
-def bundles(section, stamp):
-    """Return the MIME bundles of one section, one an output. `stamp` is printed in each that has words."""
+def bundles(section):
+    """Return the MIME bundles of one section, one an output; each picture is followed by its words.
+
+    Every output that has words prints a stamp made from its content. An edit leaves the outputs that it does not touch
+    as they are, stamp and all; the form knows the stamps of the calc as it is, and marks every other output stale.
+    """
     made, rest = [], []
     for node in section["nodes"]:
         if node["type"] == "figure":
+            stamp = _stamp([node["png"], node["caption"]])
             made.append(_bundle(section, stamp, [node], {"image/png": node["png"], "text/plain": node["alt"]}))
+            made.append({"text/markdown": f"{markdown_words(node['caption'])}\n\n{_printed(stamp)}\n",
+                         "text/plain": f"{node['caption']}\nstamp {stamp}"})
         else:
             rest.append(node)
     if rest:
+        stamp = _stamp(rest)
         if any(node["type"] == "equation" for node in rest):
             public = {"text/latex": latex(section["title"], rest, stamp)}
         else:
@@ -28,9 +38,22 @@ def bundles(section, stamp):
     return made
 
 
+def metadata(bundle):
+    """Return the metadata of an output: words that only the notebook needs are left out by the exporters."""
+    return {} if SECTION in bundle or CALC in bundle else {"calclib": "twin"}
+
+
+def _stamp(content):
+    return hashlib.sha256(json.dumps(content, sort_keys=True).encode()).hexdigest()[:8]
+
+
+def _printed(stamp):
+    return f"<small>stamp {stamp}</small>"
+
+
 def _bundle(section, stamp, nodes, public):
     kept = [{k: v for k, v in node.items() if k != "png" or not node.get("svg")} for node in nodes]
-    return {**public, SECTION: {"key": section["key"], "title": section["title"], "digest": stamp, "nodes": kept}}
+    return {**public, SECTION: {"key": section["key"], "title": section["title"], "stamp": stamp, "nodes": kept}}
 
 
 # --- LaTeX ------------------------------------------------------------------------------------------------------
@@ -51,7 +74,7 @@ def latex_words(text):
 
 def latex(title, nodes, stamp):
     """Return the text/latex of a block of equations, one display a equation, its clause at the right margin."""
-    lines = [rf"$$\large\textbf{{{_bold(title)}}}\tag*{{inputs {stamp}}}$$"]
+    lines = [rf"$$\large\textbf{{{_bold(title)}}}\tag*{{stamp {stamp}}}$$"]
     for node in nodes:
         if node["type"] == "equation":
             lines.append(_equation(node))
@@ -71,8 +94,8 @@ def _equation(node):
         first += rf"\quad {latex_words(node['note'])}"
     rows = [first + tag]
     if node["symbolic"]:
-        rows.append(f"&= {node['substituted']}")
-        rows.append(f"&= {node['result']}" + (rf"\quad {latex_words(node['note'])}" if node["note"] else ""))
+        note = rf"\quad {latex_words(node['note'])}" if node["note"] else ""
+        rows.append(f"&= {node['substituted']} = {node['result']}{note}")
     return "$$\\begin{align*}\n" + " \\\\\n".join(rows) + "\n\\end{align*}$$"
 
 
@@ -93,7 +116,7 @@ def markdown(title, nodes, stamp):
     parts = [f"### {markdown_words(title)}"]
     for node in nodes:
         parts.append(_MARKDOWN[node["type"]](node))
-    parts.append(f"<small>inputs {stamp}</small>")
+    parts.append(_printed(stamp))
     return "\n\n".join(parts) + "\n"
 
 

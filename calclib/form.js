@@ -11,7 +11,7 @@ const LONGEST_JOB = 120000; // ms for the work of a button, once the kernel has 
 const SLOWEST_RETRY = 30000; // ms between questions to a silent kernel
 const SETTLE = 1500; // ms by which an output may trail the answer before it counts as stale
 const LISTED = 50; // options of a searched list drawn at once
-const STAMPS = /inputs\s+([0-9a-f]{8,})/gi; // no end mark: the next block's text may follow without a space
+const STAMPS = /stamp\s+([0-9a-f]{8,})/gi; // no end mark: the next block's text may follow without a space
 const DEAD = "No answer from the kernel: figures below may be stale; run the workbook again.";
 const OUTDATED = "Outputs marked STALE were made from other inputs: run the workbook again.";
 const UNUSABLE = "No figures belong to the entries as they are: outputs marked STALE were made from other inputs.";
@@ -85,7 +85,8 @@ function openLine(model, report) {
   };
 }
 
-/** Compares the stamp printed in each output of the notebook with the judge's, and marks the outputs that differ. */
+/** Compares the stamp printed in each output of the notebook with the judge's, and marks the outputs that differ.
+    An output that an edit does not touch keeps its stamp, so the judge vouches for several. */
 function watchOutputs(el, current, report) {
   const since = new WeakMap();
   let timer = 0, observer = null, notebook = null;
@@ -100,10 +101,11 @@ function watchOutputs(el, current, report) {
       observer.observe(notebook, { childList: true, characterData: true, subtree: true });
     }
     const { stamp, silent } = current();
+    const valid = stamp ? stamp.split(" ") : [];
     let anyStale = false, settling = false;
     for (const output of notebook.querySelectorAll(".jp-Cell-outputWrapper")) {
       const stamps = output.contains(el) ? [] : [...output.textContent.matchAll(STAMPS)].map((match) => match[1]);
-      const differs = stamps.some((found) => !stamp || !found.toLowerCase().startsWith(stamp));
+      const differs = stamps.some((found) => !valid.some((each) => found.toLowerCase().startsWith(each)));
       if (!differs) since.delete(output);
       else if (!since.has(output)) since.set(output, Date.now());
       const stale = stamps.length > 0 && (silent || (differs && Date.now() - since.get(output) >= SETTLE));

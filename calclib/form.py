@@ -1,8 +1,9 @@
 """The input form inside a workbook: labelled text fields, and a judge who says what each text means and what is wrong.
 
 The form holds texts exactly as typed and decides nothing. The judge reads them, recomputes what hangs on them and
-answers with messages, echoes and the stamp of the figures that belong to these inputs. Every output made from the
-inputs prints `inputs <stamp>`; the page greys out, and overprints STALE, each output whose stamp is not the judge's.
+answers with messages, echoes and the stamps of the figures that belong to these inputs. Every output made from the
+inputs prints `stamp <hex digits>`; the page greys out, and overprints STALE, each output whose stamp the judge does not
+vouch for.
 """
 
 import re
@@ -20,7 +21,7 @@ from calclib.errors import CalcError, nearest
 PACKAGE = files("calclib")
 FIELD_KEYS = {"name", "label", "symbol", "unit", "group", "help", "choices", "search", "example", "optional", "slider"}
 ANSWER_KEYS = {"ok", "messages", "echo", "stamp", "status"}
-STAMP = re.compile(r"[0-9a-f]{8,64}")
+STAMP = re.compile(r"[0-9a-f]{8,64}( [0-9a-f]{8,64})*")
 SILENT = {"ok": True, "text": "", "earlier": False}  # what the buttons have to say before one is pressed
 
 # Stands below the form in the stored notebook; form.css hides it as long as a running form stands above it.
@@ -42,7 +43,8 @@ class Form(anywidget.AnyWidget):
     texts : dict, name -> text as typed; a field without one starts empty.
     judge : called as `judge(name, text, texts)` after every change, and once as `judge(None, None, texts)` when the
         form is made. Returns a dict: "ok" (bool), and optionally "messages" (name -> what is wrong), "echo" (name ->
-        the value as read), "status" (one line) and "stamp" (8 to 64 hex digits). Without a stamp no figure belongs to
+        the value as read), "status" (one line) and "stamp" (8 to 64 hex digits, several
+        apart by spaces). Without a stamp no figure belongs to
         these texts, and every stamped output is shown as stale.
     on_save, on_issue : called without arguments by the buttons; the text they return is shown. Without a function
         there is no button.
@@ -179,7 +181,7 @@ def _checked_answer(answer, names):
             raise ValueError(f"the judge answered with an unknown key {key!r}{nearest(key, ANSWER_KEYS)}")
     stamp = answer.get("stamp") or ""
     if stamp and not STAMP.fullmatch(stamp):
-        raise ValueError(f"the judge's stamp must be 8 to 64 hex digits, not {stamp!r}")
+        raise ValueError(f"the judge's stamp must be 8 to 64 hex digits, or several, not {stamp!r}")
     told = {}
     for key in ("messages", "echo"):
         told[key] = {name: str(text) for name, text in (answer.get(key) or {}).items()}

@@ -85,13 +85,13 @@ class Workbook:
         """Show one group of sections, each as ordinary outputs that are replaced when an input changes."""
         with self.lock:
             for index, bundle in enumerate(self._bundles(group, vectors=True)):
-                self._shown[group, index] = (display(bundle, raw=True, display_id=True), bundle)
+                self._shown[group, index] = (_display(bundle), bundle)
 
     def close(self):
         """Assert that the calc is consistent, and store the case and the record for the exporters."""
         with self.lock:
             bundle = self._closing()
-            self._shown["close", 0] = (display(bundle, raw=True, display_id=True), bundle)
+            self._shown["close", 0] = (_display(bundle), bundle)
 
     # --- what the form calls
 
@@ -115,7 +115,7 @@ class Workbook:
             if messages:
                 status = "The calc below is the last good one; see the message beside the field."
             return {"ok": not (messages or (status and not echo)), "messages": messages, "echo": echo,
-                    "stamp": self.calc.case.digest, "status": status}
+                    "stamp": " ".join(self._stamps()), "status": status}
 
     def _save(self):
         with self.lock:
@@ -137,21 +137,25 @@ class Workbook:
     def _bundles(self, group, vectors):
         sections = _GROUPS[group](self.calc) if group != "sensitivity" and group != "sketch_section" else \
             _GROUPS[group](self.calc, vectors)
-        return [bundle for section in sections for bundle in bundles.bundles(section, self.calc.case.digest)]
+        return [bundle for section in sections for bundle in bundles.bundles(section)]
 
     def _refresh(self, vectors):
         groups = dict.fromkeys(group for group, _ in self._shown if group != "close")
         for group in sorted(groups, key=lambda g: g in ("sketch_section", "sensitivity")):  # equations paint first
             for index, bundle in enumerate(self._bundles(group, vectors)):
                 self._replace((group, index), bundle)
-        if ("close", 0) in self._shown:
+        if vectors and ("close", 0) in self._shown:  # until then an export refuses: the stamps do not agree
             self._replace(("close", 0), self._closing())
 
     def _replace(self, key, bundle):
         handle, before = self._shown[key]
         if bundle != before:
-            handle.update(bundle, raw=True)
+            handle.update(bundle, raw=True, metadata=bundles.metadata(bundle))
             self._shown[key] = (handle, bundle)
+
+    def _stamps(self):
+        """Return the stamps of all outputs as they are shown now."""
+        return [bundle[bundles.SECTION]["stamp"] for _, bundle in self._shown.values() if bundles.SECTION in bundle]
 
     def _settle_later(self):
         if self._timer:
@@ -171,7 +175,11 @@ class Workbook:
         words = (f"Inputs {calc.case.digest}. {len(calc.limit_states)} limit states, {len(calc.rules)} detailing rules. "
                  + document.verdict(calc)["text"])
         return {"text/plain": words, bundles.CALC: {"document": document.cover(calc), "record": made,
-                                                    "case": calc.case.yaml()}}
+                                                    "case": calc.case.yaml(), "stamps": self._stamps()}}
+
+
+def _display(bundle):
+    return display(bundle, raw=True, display_id=True, metadata=bundles.metadata(bundle))
 
 
 def _assert_consistent(calc, made):

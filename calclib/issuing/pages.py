@@ -54,7 +54,7 @@ def document_of(notebook):
         raise CalcError("the notebook holds no calc: run all its cells; its last cell must be book.close()."
                         if not closing else f"the notebook holds {len(closing)} calcs; a calc is one notebook.")
     document, record, case = closing[0]["document"], closing[0]["record"], closing[0]["case"]
-    _refuse_stale(document, sections)
+    _refuse_stale(closing[0].get("stamps", ()), sections)
     return {**document, "sections": sections}, case, record
 
 
@@ -64,12 +64,11 @@ def _refuse_failure(output, number):
                         "Mend it and run all cells; nothing was exported.")
 
 
-def _refuse_stale(document, sections):
+def _refuse_stale(stamps, sections):
     for section in sections:
-        digest = section.pop("digest", "unknown")
-        if digest not in (document["digest"], _NOTES):
-            raise CalcError(f"the section \"{section['title']}\" was made from inputs {digest} and the calc from "
-                            f"{document['digest']}. Run all cells again; nothing was exported.")
+        if any(stamp not in stamps for stamp in section.pop("stamps", ())):
+            raise CalcError(f"the section \"{section['title']}\" was made from other inputs than the calc. "
+                            "Run all cells again; nothing was exported.")
 
 
 def _add_section(sections, section):
@@ -77,10 +76,12 @@ def _add_section(sections, section):
     for node in section["nodes"]:
         if node["type"] not in NODE_TYPES:
             raise CalcError(f"the section \"{section['title']}\" holds \"{node['type']}\", which no page can show.")
-    if sections and sections[-1]["key"] == section["key"] and sections[-1].get("digest") == section.get("digest"):
+    if sections and sections[-1]["key"] == section["key"]:
         sections[-1]["nodes"] += section["nodes"]
+        sections[-1]["stamps"].append(section.get("stamp"))
     else:
-        sections.append({**section, "nodes": list(section["nodes"])})
+        sections.append({"key": section["key"], "title": section["title"], "nodes": list(section["nodes"]),
+                         "stamps": [section.get("stamp")]})
 
 
 def _add_nodes(sections, nodes):

@@ -18,7 +18,9 @@ CHROMIUM = next((path for name in ("chromium", "chromium-browser", "google-chrom
                  if (path := shutil.which(name))), None)
 FLAGS = ["--no-sandbox", "--disable-background-networking", "--disable-component-update", "--disable-sync",
          "--disable-quic", "--no-first-run"]
-RUN_ALL = "window.jupyterapp.commands.execute('notebook:run-all-cells')"
+RUN_ALL = "void window.jupyterapp.commands.execute('notebook:run-all-cells')"
+KERNEL = "[...window.jupyterapp.shell.widgets('main')].find(each => each.sessionContext).sessionContext.session?.kernel"
+READY = f"() => {{ const kernel = {KERNEL}; return kernel?.connectionStatus === 'connected' && kernel.status === 'idle' }}"
 
 if CHROMIUM is None and os.environ.get("CALCLIB_BROWSER_TESTS") != "required":
     collect_ignore_glob = ["test_*.py"]
@@ -93,7 +95,7 @@ def workbook(lab, chromium):
         page.goto(f"{url}/lab/tree/workbooks/{name}.ipynb?reset")
         page.wait_for_selector(".jp-Notebook .jp-Cell", timeout=60000)
         page.wait_for_function("window.jupyterapp !== undefined")
-        page.wait_for_selector(".jp-Notebook-ExecutionIndicator[data-status=idle]", timeout=60000, state="attached")
+        page.wait_for_function(READY, timeout=60000)
         if run:
             page.evaluate(RUN_ALL)
             page.wait_for_selector(".jp-Notebook .calc-form")

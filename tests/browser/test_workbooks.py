@@ -1,5 +1,6 @@
 """A person at the workbook: runs it, types, reads, mistypes, presses keys. Driven in JupyterLab in a real browser."""
 
+import re
 from urllib.parse import urlparse
 
 import pytest
@@ -27,7 +28,7 @@ def wait_for(page, made, timeout=10000):
 
 
 def field(page, label):
-    return page.locator(".calc-form").get_by_label(label, exact=True)
+    return page.locator(".calc-form").get_by_label(re.compile(f"^{label}"))
 
 
 def test_typing_changes_equation_sketch_and_plot(workbook, lab):

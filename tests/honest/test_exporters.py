@@ -285,12 +285,15 @@ def _attributes_of(wanted, source):
 
 # --- notebooks ----------------------------------------------------------------------------------------------------
 
+STAMP = "1a2b3c4d"
+
+
 def notebook():
     """Return an executed notebook of the sample calc, with a note, a plain output and a twin."""
     said = document()
     cells = []
     for section in said["sections"]:
-        data = {"text/plain": section["title"], SECTION: {**section, "digest": said["digest"]}}
+        data = {"text/plain": section["title"], SECTION: {**section, "stamp": STAMP}}
         cells.append(new_code_cell("book.show(...)", execution_count=1, outputs=[new_output("display_data", data)]))
     cells[3].outputs.append(new_output("display_data", {"text/plain": "a twin"}, metadata={"calclib": "twin"}))
     cells.insert(4, new_markdown_cell("**Note** by hand: $x \\le 3$, <script>alert(1)</script>",
@@ -300,7 +303,7 @@ def notebook():
     cells.append(new_markdown_cell("Buttons of the screen", metadata={"tags": ["remove-cell"]}))
     cells.insert(0, new_markdown_cell("Buttons of the screen", metadata={"tags": ["workbook"]}))
     closing = {"document": {k: v for k, v in said.items() if k != "sections"}, "record": {"format": "calclib record 1"},
-               "case": "kind: \"pin_plate\"\n"}
+               "case": "kind: \"pin_plate\"\n", "stamps": [STAMP]}
     cells.append(new_code_cell("book.close()", execution_count=3,
                                outputs=[new_output("display_data", {"text/plain": "done", CALC: closing})]))
     for i, cell in enumerate(cells):
@@ -377,11 +380,11 @@ def test_other_notebooks_are_refused():
     assert refused(failed) == ("cell 4 failed with ValueError: no such plate. Mend it and run all cells; "
                                "nothing was exported.")
     stale = notebook()
-    stale.cells[2].outputs[0].data[SECTION]["digest"] = "000000000000"
-    assert refused(stale) == ('the section "Scope" was made from inputs 000000000000 and the calc from 3f9a0c1d22e4. '
-                              "Run all cells again; nothing was exported.")
-    del stale.cells[2].outputs[0].data[SECTION]["digest"]
-    assert refused(stale).startswith('the section "Scope" was made from inputs unknown and the calc from')
+    message = 'the section "Scope" was made from other inputs than the calc. Run all cells again; nothing was exported.'
+    stale.cells[2].outputs[0].data[SECTION]["stamp"] = "00000000"
+    assert refused(stale) == message
+    del stale.cells[2].outputs[0].data[SECTION]["stamp"]
+    assert refused(stale) == message
     strange = notebook()
     strange.cells[2].outputs[0].data[SECTION]["nodes"] = [{"type": "raw"}]
     assert refused(strange) == 'the section "Scope" holds "raw", which no page can show.'

@@ -122,7 +122,7 @@ def test_a_calc_error_shows_as_it_is_written():
     [
         (None, 'the judge must answer with a dict that says "ok", not None'),
         ({"ok": "yes"}, "the judge must answer with a dict that says \"ok\", not {'ok': 'yes'}"),
-        ({"ok": True, "stamp": "draft"}, "the judge's stamp must be 8 to 64 hex digits, not 'draft'"),
+        ({"ok": True, "stamp": "draft"}, "the judge's stamp must be 8 to 64 hex digits, or several, not 'draft'"),
         ({"ok": True, "massages": {}}, "the judge answered with an unknown key 'massages'; did you mean \"messages\"?"),
         ({"ok": False, "messages": {"tread": "no"}}, "the judge spoke of an unknown field 'tread': no"),
     ],
