@@ -55,6 +55,8 @@ class Block:
     def __call__(self, equation, note="", symbols=None, **values):
         """Compute one equation, record it, and return its result."""
         result = equation(**values)
+        if self.run.arrays:       # an argument outside its range gives NaN here and is refused as a single number
+            self.run.outside = self.run.outside | np.isnan(result)
         cite = equation.cite.text(self.run.edition) if equation.cite.document == self.run.document else \
             equation.cite.text("") if "" in equation.cite.clauses else equation.cite.text(self.run.edition)
         self.steps.append(Step(equation, values, result, symbols or {}, cite, note))

@@ -48,6 +48,7 @@ class Argument:
     name: str
     meaning: str
     dimension: units.Dimension
+    unit: str                     # as the docstring writes it
     unit_set: str | None          # the only set the unit belongs to, or None
     low: float = -math.inf
     high: float = math.inf
@@ -60,9 +61,11 @@ class Argument:
             return np.where(inside & (value <= self.high), value, np.nan)
         inside = (value > self.low if self.open_low else value >= self.low) and value <= self.high
         if not inside:
+            unit = "" if self.unit == "1" else f" {self.unit}"
             limit = "above" if self.open_low else "at least"
             limit = f"{limit} {self.low:g}" + (f" and at most {self.high:g}" if self.high < math.inf else "")
-            raise RangeError(f"{owner}: {self.name} ({self.meaning}) is {value:g}; the equation covers {limit}.")
+            raise RangeError(f"{self.meaning} {self.name} is {value:g}{unit}; the equation of {owner} covers "
+                             f"{limit}{unit}.")
         return value
 
 
@@ -86,7 +89,7 @@ def _argument(line, owner):
         if not numbers:
             raise EquationFormError(f'{owner}: range "{span}" of {name} is not "positive", "not negative" or "A to B"')
         low, high, open_low = float(numbers[1]), float(numbers[2]), False
-    return Argument(name, meaning, dimension, unit_set, low, high, open_low)
+    return Argument(name, meaning, dimension, unit, unit_set, low, high, open_low)
 
 
 def _docstring_arguments(function):
@@ -190,7 +193,8 @@ class Equation:
         return list(self.results.values())[-1]
 
     def __call__(self, **values):
-        checked = {name: argument.check(values.pop(name), self.name) for name, argument in self.arguments.items()}
+        checked = {name: argument.check(values.pop(name), self.name.replace("_", " "))
+                   for name, argument in self.arguments.items()}
         if values:
             raise TypeError(f"{self.name} has no argument {', '.join(values)}")
         return self.function(**checked)

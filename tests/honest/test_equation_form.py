@@ -189,14 +189,14 @@ RANGES = ("    a : first [1], positive", "    b : second [1], not negative", "  
 
 
 @pytest.mark.parametrize("values, message", [
-    ({"a": 0.0}, "written: a (first) is 0; the equation covers above 0."),
-    ({"a": -1.5}, "written: a (first) is -1.5; the equation covers above 0."),
-    ({"a": float("nan")}, "written: a (first) is nan; the equation covers above 0."),
-    ({"b": -1e-9}, "written: b (second) is -1e-09; the equation covers at least 0."),
-    ({"b": float("nan")}, "written: b (second) is nan; the equation covers at least 0."),
-    ({"c": 0.2}, "written: c (third) is 0.2; the equation covers at least 0.25 and at most 4."),
-    ({"c": 4.5}, "written: c (third) is 4.5; the equation covers at least 0.25 and at most 4."),
-    ({"c": float("inf")}, "written: c (third) is inf; the equation covers at least 0.25 and at most 4."),
+    ({"a": 0.0}, "first a is 0; the equation of written covers above 0."),
+    ({"a": -1.5}, "first a is -1.5; the equation of written covers above 0."),
+    ({"a": float("nan")}, "first a is nan; the equation of written covers above 0."),
+    ({"b": -1e-9}, "second b is -1e-09; the equation of written covers at least 0."),
+    ({"b": float("nan")}, "second b is nan; the equation of written covers at least 0."),
+    ({"c": 0.2}, "third c is 0.2; the equation of written covers at least 0.25 and at most 4."),
+    ({"c": 4.5}, "third c is 4.5; the equation of written covers at least 0.25 and at most 4."),
+    ({"c": float("inf")}, "third c is inf; the equation of written covers at least 0.25 and at most 4."),
 ])
 def test_outside_the_range(values, message):
     with pytest.raises(RangeError) as caught:
