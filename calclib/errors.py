@@ -35,6 +35,15 @@ class RangeError(CalcError):
     """A value lies outside the range that an equation covers."""
 
 
+def with_article(words):
+    """Return words with their article.
+
+    >>> with_article("force"), with_article("area")
+    ('a force', 'an area')
+    """
+    return ("an " if words[0].lower() in "aeiou" else "a ") + words
+
+
 def nearest(name, names):
     """Return '; did you mean "x"?' for the closest of `names`, or an empty string.
 

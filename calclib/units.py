@@ -17,7 +17,7 @@ from functools import lru_cache
 
 import pint
 
-from calclib.errors import EntryError
+from calclib.errors import EntryError, with_article
 
 US, SI = "US", "SI"
 UNIT_SETS = (US, SI)
@@ -123,8 +123,8 @@ def _convert(value, unit, dimension, unit_set, shown, field):
     try:
         return float(registry().Quantity(value, unit).to(base).magnitude)
     except pint.DimensionalityError as error:
-        raise EntryError(field, f'"{shown}" is not how a {dimension.name} is stated in {unit_set} units; write '
-                                f'"{dimension.examples[unit_set]}"') from error
+        raise EntryError(field, f'"{shown}" is not how {with_article(dimension.name)} is stated in {unit_set} units; '
+                                f'write "{dimension.examples[unit_set]}"') from error
 
 
 @lru_cache(4096)
@@ -175,7 +175,8 @@ def read(text, dimension, unit_set, field):
         return _convert(value, dimension.accepted[unit], dimension, unit_set, shown, field)
     for other in DIMENSIONS.values():
         if unit in other.accepted:
-            raise EntryError(field, f'"{shown}" is a {other.name}, and a {dimension.name} is needed; {examples}')
+            raise EntryError(field, f'"{shown}" is {with_article(other.name)}, and {with_article(dimension.name)} is '
+                                    f"needed; {examples}")
     raise EntryError(field, f'"{unit}" in "{shown}" is not a unit known here; {examples}')
 
 

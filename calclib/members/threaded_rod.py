@@ -5,7 +5,7 @@ import numpy as np
 from calclib import units
 from calclib.equations import mechanics, threads
 from calclib.equations.aisc360 import RUPTURE, YIELDING, members, rods
-from calclib.errors import EntryError
+from calclib.errors import EntryError, with_article
 from calclib.members.fields import Field, Kind, Plot
 from calclib.members.steel import refuse_stresses
 from calclib.sketch import Arrow, Break, Dimension, Drawing, Leader, Named, Outline
@@ -88,8 +88,9 @@ def _stress_area(x, run, part):
     """Return the tensile stress area by the pitch of the series, or by the pitch that is given."""
     inch = x.thread_series in INCH_SERIES
     if inch != (run.units == units.US):
-        raise EntryError("thread_series", f"{x.thread_series} is an {'inch' if inch else 'metric'} thread and the calc "
-                                          f"is in {run.units} units; choose a series of the same units")
+        kind = "an inch" if inch else "a metric"
+        raise EntryError("thread_series", f"{x.thread_series} is {kind} thread and the calc is in {run.units} units; "
+                                          "choose a series of the same units")
     pitch = _pitch(x, run, part)
     symbol, dimension, cite = ("n", units.PER_LENGTH, "ASME B1.1") if inch else ("P", units.LENGTH, "ISO 261")
     coarsest = 1.3 / pitch if inch else 1.3 * pitch
@@ -163,9 +164,8 @@ def _fitting(x, run):
                                          "is never compared with a design strength. Give the maker's allowable rating")
     if not factored and run.method == "LRFD":
         if x.service_load is None:
-            raise EntryError("service_load", f"the rating is an {x.rating_basis} and the calc is in LRFD; a factored "
-                             "load is never compared with a working rating. Give the service load"
-                             .replace("an safe", "a safe"))
+            raise EntryError("service_load", f"the rating is {with_article(x.rating_basis)} and the calc is in LRFD; a factored "
+                             "load is never compared with a working rating. Give the service load")
         required, symbol = x.service_load, "P_{s}"
     place = f"{x.rating_source}"
     part.given("R", units.FORCE, x.fitting_rating, place, f"Maker's rating, stated as {x.rating_basis}.")
