@@ -164,8 +164,9 @@ def _fitting(x, run):
                                          "is never compared with a design strength. Give the maker's allowable rating")
     if not factored and run.method == "LRFD":
         if x.service_load is None:
-            raise EntryError("service_load", f"the rating is {with_article(x.rating_basis)} and the calc is in LRFD; a factored "
-                             "load is never compared with a working rating. Give the service load")
+            raise EntryError("service_load", f"the rating is {with_article(x.rating_basis)} and the calc is in LRFD; a "
+                                             "factored load is never compared with a working rating. Give the service "
+                                             "load")
         required, symbol = x.service_load, "P_{s}"
     place = f"{x.rating_source}"
     part.given("R", units.FORCE, x.fitting_rating, place, f"Maker's rating, stated as {x.rating_basis}.")

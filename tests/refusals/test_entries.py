@@ -162,8 +162,8 @@ def test_a_plate_in_si_is_refused(changes, message):
 
 
 LEVEL = ("load_level: the required strength is at {} level and the design basis is {}; a factored load is never "
-         "compared with an allowable strength, nor a service load with a design strength. Give the load of the same method, or "
-         "change the method.")
+         "compared with an allowable strength, nor a service load with a design strength. Give the load of "
+         "the same method, or change the method.")
 
 
 @pytest.mark.parametrize("level, method", [("ASD", "LRFD"), ("LRFD", "ASD")])
@@ -180,8 +180,8 @@ NEVER = "a service load is never compared with a design strength"
 
 @pytest.mark.parametrize("changes, message", [
     ({"standard": "AISC 360-16", "strength_rule": "Fu on tensile stress area"}, "strength_rule: AISC 360-16 has no "
-     "rule on the tensile stress area; it came with AISC 360-22 Table J3.2. Choose \"0.75 Fu on body area\" or the 2022 "
-     "edition."),
+     "rule on the tensile stress area; it came with AISC 360-22 Table J3.2. Choose \"0.75 Fu on body area\" or the "
+     "2022 edition."),
     (RATED | ASD, f"rating_basis: the rating is an LRFD design strength and the calc is in ASD; {NEVER}. Give the "
      "maker's allowable rating."),
     (RATED | {"rating_basis": "safe working load"}, "service_load: the rating is a safe working load and the calc is "
