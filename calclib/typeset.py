@@ -91,6 +91,7 @@ def _with_symbols(latex, alias, symbols, mark):
 def _tidy(latex):
     latex = re.sub(r"\\left\( (\S+) \\right\)(?= \^)", r"\1", latex)               # (d)^2 -> d^2, but a value keeps
     latex = re.sub(r"(⟦\d+⟧)(?=\s*\^)", r"\\left( \1 \\right)", latex)             # its brackets: (1 in)^2
+    latex = re.sub(r"\^\{ \\left\( - (\d+) \\right\) \}", r"^{ -\1 }", latex)               # a negative power
     latex = re.sub(r"\\operatorname\{(min|max)imum\}", r"\\\1", latex)
     return re.sub(r"\s+", " ", latex).strip()
 
@@ -111,7 +112,7 @@ def _prove_units(equation, unit_set):
     space = {name: getattr(form, name) for name in form.FUNCTIONS} | {"pi": pi}
     floats = dict(space)
     for i, argument in enumerate(equation.arguments.values()):
-        value = 1.5 + 0.25 * i  # any numbers do, as long as they differ
+        value = 4 / (1 + 0.25 * i)  # any numbers do that differ; they fall, since a part stands behind its whole
         floats[argument.name] = value
         space[argument.name] = quantity(value, argument.dimension.base[argument.unit_set or unit_set])
     for line, result in zip(equation.lines, equation.results.values(), strict=True):

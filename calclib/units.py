@@ -46,6 +46,7 @@ _LENGTHS = {
     "in": "inch", "in.": "inch", "inch": "inch", "inches": "inch", '"': "inch", "ft": "foot", "'": "foot",
     "mm": "millimeter", "cm": "centimeter", "m": "meter",
 }
+_ANGLES = {"deg": "degree", "degrees": "degree", "°": "degree", "rad": "radian"}
 _FORCES = {"kip": "kip", "kips": "kip", "lbf": "force_pound", "lb": "force_pound", "N": "newton", "kN": "kilonewton",
            "MN": "meganewton"}
 _STRESSES = {"ksi": "ksi", "psi": "psi", "MPa": "megapascal", "GPa": "gigapascal", "N/mm2": "megapascal",
@@ -59,6 +60,11 @@ AREA = Dimension(
     {US: ("in²", r"\mathrm{in}^{2}", 1), SI: ("mm²", r"\mathrm{mm}^{2}", 1)},
     {"in2": "inch**2", "in²": "inch**2", "in^2": "inch**2", "mm2": "millimeter**2", "mm²": "millimeter**2",
      "mm^2": "millimeter**2"}, {US: "0.334 in2", SI: "245 mm2"})
+VOLUME = Dimension(     # of a section modulus, the only third power of a length that the trade prints here
+    "section modulus", {US: "inch**3", SI: "millimeter**3"},
+    {US: ("in³", r"\mathrm{in}^{3}", 1), SI: ("mm³", r"\mathrm{mm}^{3}", 1)},
+    {"in3": "inch**3", "in³": "inch**3", "in^3": "inch**3", "mm3": "millimeter**3", "mm³": "millimeter**3",
+     "mm^3": "millimeter**3"}, {US: "20.4 in3", SI: "334000 mm3"})
 FORCE = Dimension(
     "force", {US: "kip", SI: "newton"}, {US: ("kip", r"\mathrm{kip}", 1), SI: ("kN", r"\mathrm{kN}", 1e-3)},
     _FORCES, {US: "24 kip", SI: "110 kN"})
@@ -74,12 +80,21 @@ PITCH = Dimension(
     "thread pitch", {US: "1/inch", SI: "millimeter"},
     {US: ("per in", r"\mathrm{in}^{-1}", 1), SI: ("mm", r"\mathrm{mm}", 1)},
     {"per in": "1/inch", "tpi": "1/inch", "/in": "1/inch", "mm": "millimeter"}, {US: "10 tpi", SI: "2.5 mm"})
+# The equations compute in radians. The trade states a direction in degrees; an arc enters a formula in radians.
+ANGLE = Dimension(
+    "angle", {US: "radian", SI: "radian"}, dict.fromkeys(UNIT_SETS, ("deg", r"\mathrm{deg}", 180 / math.pi)), _ANGLES,
+    {US: "30 deg", SI: "30 deg"})
+ARC = Dimension(
+    "angle of an arc", {US: "radian", SI: "radian"}, dict.fromkeys(UNIT_SETS, ("rad", r"\mathrm{rad}", 1)), _ANGLES,
+    {US: "1.49 rad", SI: "1.49 rad"})
 NUMBER = Dimension("number", {US: "", SI: ""}, {US: ("", "", 1), SI: ("", "", 1)}, {"": ""}, {US: "0.75", SI: "0.75"})
 
-DIMENSIONS = {d.name: d for d in (LENGTH, AREA, FORCE, STRESS, PER_LENGTH, PITCH, NUMBER)}
+DIMENSIONS = {d.name: d for d in (LENGTH, AREA, VOLUME, FORCE, STRESS, PER_LENGTH, PITCH, ANGLE, ARC, NUMBER)}
 # How a docstring writes the unit of an argument -> its dimension, and the one unit set it holds in (None: both).
 DOCSTRING_UNITS = {
     "in or mm": (LENGTH, None), "in2 or mm2": (AREA, None), "kip or N": (FORCE, None), "ksi or MPa": (STRESS, None),
+    "in3 or mm3": (VOLUME, None), "1/in or 1/mm": (PER_LENGTH, None), "rad": (ARC, None),
+    "rad, printed in degrees": (ANGLE, None),
     "in": (LENGTH, US), "mm": (LENGTH, SI), "in2": (AREA, US), "mm2": (AREA, SI), "1/in": (PER_LENGTH, US),
     "1": (NUMBER, None),
 }

@@ -11,26 +11,29 @@ What a reader has to know of the printing, and nothing more:
     - the ratio is rounded up.
 """
 
+import math
 import re
 from fractions import Fraction
 from functools import lru_cache
 
 import sympy
-from mpmath import iv
+from mpmath import iv, mp
 from sympy.parsing.latex import parse_latex
 
 # Factors to N and mm, exact by definition of the units.
 _INCH, _KIP = Fraction("25.4"), Fraction("4448.2216152605")
 FACTORS = {"in": _INCH, "mm": Fraction(1), "kip": _KIP, "kN": Fraction(1000), "ksi": _KIP / _INCH**2,
-           "MPa": Fraction(1)}
+           "MPa": Fraction(1), "rad": Fraction(1), "deg": Fraction(math.pi) / 180}    # to 16 figures
 EXACT = {r"\phi", r"\Omega"}
 FIGURES = 4
 NOT_COUNTED = Fraction(1, 10**9)     # what two computers may differ by
 
 _NUMBER = (r"(?:(?P<decimal>\d+(?:\.\d+)?)?\\tfrac\{(?P<top>\d+)\}\{(?P<bottom>\d+)\}|(?P<plain>\d+(?:\.\d+)?))"
            r"(?:\\ \\mathrm\{(?P<unit>[A-Za-z]+)\}(?:\^\{(?P<power>-?\d)\})?)?")
-_STRUCTURE = r"\\left\(|\\right\)|\\frac|\\cdot|\\min|\\max|\\sqrt|[-+{}^,]"
-_SYMBOL = r"(?:\\[A-Za-z]+|[A-Za-z])(?:_\{(?:[^{}]|\{[^{}]*\})*\})?"
+_STRUCTURE = (r"\\left\(|\\right\)|\\frac|\\cdot|\\min|\\max|\\sqrt|(?:\\sin|\\cos|\\tan|\\arcsin)(?![A-Za-z])"
+              r"|[-+{}^,]")
+_SYMBOL = r"(?:\\bar\{[A-Za-z]\}|\\[A-Za-z]+|[A-Za-z])'?(?:_\{(?:[^{}]|\{[^{}]*\})*\})?"
+_FUNCTIONS = {sympy.sin: iv.sin, sympy.cos: iv.cos, sympy.tan: iv.tan}
 _LETTERS = "abcfghjkmnqrstuvwxyz"    # the parser gives no meaning of its own to these
 
 
@@ -131,6 +134,13 @@ def _work_out(expression, values):
         return _work_out(expression.base, values) ** int(expression.exp)
     if expression.is_Pow and expression.exp == sympy.Rational(1, 2):
         return iv.sqrt(_work_out(expression.base, values))
+    if expression.is_Pow:
+        return _work_out(expression.base, values) ** _work_out(expression.exp, values)
+    if expression.func in _FUNCTIONS:
+        return _FUNCTIONS[expression.func](_work_out(expression.args[0], values))
+    if expression.func == sympy.asin:
+        sine = _work_out(expression.args[0], values)
+        return iv.mpf([mp.asin(sine.a), mp.asin(sine.b)])    # it rises with its argument
     parts = [_work_out(part, values) for part in expression.args]
     total = parts[0]
     for part in parts[1:]:

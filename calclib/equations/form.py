@@ -12,7 +12,9 @@ import numpy as np
 from calclib import units
 from calclib.errors import RangeError
 
-FUNCTIONS = ("sqrt", "minimum", "maximum")  # what an equation may call; defined at the end of this file
+# What an equation may call; defined at the end of this file. Angles are in radians. A sine stands last in its
+# product: sin(x) times y may be read as the sine of x times y.
+FUNCTIONS = ("sqrt", "minimum", "maximum", "sin", "cos", "tan", "asin")
 _ALLOWED = (ast.BinOp, ast.UnaryOp, ast.USub, ast.Add, ast.Sub, ast.Mult, ast.Div, ast.Pow, ast.Name, ast.Load,
             ast.Constant, ast.Call)
 # The renderer drops every line that holds one of these, even inside a longer name.
@@ -243,3 +245,34 @@ def maximum(a, b):
 def sqrt(a):
     """Return the square root of a number, array or quantity, for use inside an equation."""
     return math.sqrt(a) if _plain(a) else np.sqrt(a)
+
+
+def sin(a):
+    """Return the sine of an angle [rad] that is a number, array or quantity, for use inside an equation."""
+    return math.sin(a) if _plain(a) else np.sin(a)
+
+
+def cos(a):
+    """Return the cosine of an angle [rad] that is a number, array or quantity, for use inside an equation."""
+    return math.cos(a) if _plain(a) else np.cos(a)
+
+
+def tan(a):
+    """Return the tangent of an angle [rad] that is a number, array or quantity, for use inside an equation."""
+    return math.tan(a) if _plain(a) else np.tan(a)
+
+
+def asin(a):
+    """Return the angle [rad] of a sine that is a number, array or quantity, for use inside an equation.
+
+    A number outside -1 to 1 is refused; in an array it becomes NaN, as every value outside a range does.
+
+    >>> round(asin(0.5), 6)
+    0.523599
+    """
+    if _plain(a):
+        if not -1 <= a <= 1:
+            raise RangeError(f"the sine of an angle is {a:g}; it lies between -1 and 1.")
+        return math.asin(a)
+    with np.errstate(invalid="ignore"):
+        return np.arcsin(a)

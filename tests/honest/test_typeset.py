@@ -46,7 +46,8 @@ def in_base_of_pocket(value, dimension, unit_set):
     """Return a value [base unit] in N and mm, the units of the pocket calculator."""
     base = dimension.base[unit_set]
     return float(units.registry().Quantity(value, base).to_base_units().m_as(
-        {"length": "mm", "area": "mm**2", "force": "N", "stress": "MPa", "threads per length": "1/mm", "number": ""}[
+        {"length": "mm", "area": "mm**2", "force": "N", "stress": "MPa", "threads per length": "1/mm", "number": "",
+         "section modulus": "mm**3", "angle": "rad", "angle of an arc": "rad"}[
             dimension.name]))
 
 
