@@ -6,41 +6,52 @@ The public form reads truly in any notebook viewer, trusted or not; the private 
 import hashlib
 import json
 import re
+from dataclasses import dataclass
 
 SECTION = "application/vnd.calclib.section+json"
 CALC = "application/vnd.calclib.calc+json"
 _BAR = 20
+_LARGEST_DISPLAY = 2500
 
 
-def bundles(section):
-    """Return the MIME bundles of one section, one an output; each picture is followed by its words.
+@dataclass(frozen=True)
+class Output:
+    """One output of a notebook: its MIME bundle, and the stamp that was made from its content."""
 
-    Every output that has words prints a stamp made from its content. An edit leaves the outputs that it does not touch
-    as they are, stamp and all; the form knows the stamps of the calc as it is, and marks every other output stale.
+    data: dict
+    stamp: str
+
+    @property
+    def metadata(self):
+        """Words that only the notebook needs are left out by the exporters."""
+        return {} if SECTION in self.data or CALC in self.data else {"calclib": "twin"}
+
+
+def outputs(section, drawn_from=""):
+    """Return the Outputs of one section.
+
+    Pictures and blocks of equations are followed by words that print a stamp made from their content. An edit leaves
+    the outputs that it does not touch as they are, stamp and all; the form knows the stamps of the calc as it is and
+    marks every other output stale. A picture's stamp is made from its caption and `drawn_from`, the digest of the
+    inputs, so that it is known before the picture is drawn.
     """
-    made, rest = [], []
-    for node in section["nodes"]:
-        if node["type"] == "figure":
-            stamp = _stamp([node["png"], node["caption"]])
-            made.append(_bundle(section, stamp, [node], {"image/png": node["png"], "text/plain": node["alt"]}))
-            made.append({"text/markdown": f"{markdown_words(node['caption'])}\n\n{_printed(stamp)}\n",
-                         "text/plain": f"{node['caption']}\nstamp {stamp}"})
-        else:
-            rest.append(node)
-    if rest:
+    figures = [node for node in section["nodes"] if node["type"] == "figure"]
+    rest = [node for node in section["nodes"] if node["type"] != "figure"]
+    made = []
+    if any(node["type"] == "equation" for node in rest):
+        made.append(_words(f"### {markdown_words(section['title'])}", section["title"], ""))
         stamp = _stamp(rest)
-        if any(node["type"] == "equation" for node in rest):
-            public = {"text/latex": latex(section["title"], rest, stamp)}
-        else:
-            public = {"text/markdown": markdown(section["title"], rest, stamp)}
-        plain = plain_text(section["title"], rest)
-        made.insert(0, _bundle(section, stamp, rest, {**public, "text/plain": plain}))
+        made.append(_output(section, rest, stamp, {"text/latex": latex(rest, stamp),
+                                                   "text/plain": plain_text(section["title"], rest)}))
+    elif rest:
+        stamp = _stamp(rest)
+        made.append(_output(section, rest, stamp, {"text/markdown": markdown(section["title"], rest, stamp),
+                                                   "text/plain": plain_text(section["title"], rest)}))
+    for node in figures:
+        stamp = _stamp([drawn_from, node["caption"]])
+        made.append(_output(section, [node], stamp, {"image/png": node["png"], "text/plain": node["alt"]}))
+        made.append(_words(markdown_words(node["caption"]), node["caption"], stamp))
     return made
-
-
-def metadata(bundle):
-    """Return the metadata of an output: words that only the notebook needs are left out by the exporters."""
-    return {} if SECTION in bundle or CALC in bundle else {"calclib": "twin"}
 
 
 def _stamp(content):
@@ -51,9 +62,17 @@ def _printed(stamp):
     return f"<small>stamp {stamp}</small>"
 
 
-def _bundle(section, stamp, nodes, public):
+def _words(markdown_text, plain, stamp):
+    """Return an output that stands in the notebook only."""
+    if stamp:
+        markdown_text, plain = f"{markdown_text}\n\n{_printed(stamp)}", f"{plain}\nstamp {stamp}"
+    return Output({"text/markdown": markdown_text.strip() + "\n", "text/plain": plain.strip()}, stamp)
+
+
+def _output(section, nodes, stamp, public):
     kept = [{k: v for k, v in node.items() if k != "png" or not node.get("svg")} for node in nodes]
-    return {**public, SECTION: {"key": section["key"], "title": section["title"], "stamp": stamp, "nodes": kept}}
+    private = {"key": section["key"], "title": section["title"], "stamp": stamp, "nodes": kept}
+    return Output({**public, SECTION: private}, stamp)
 
 
 # --- LaTeX ------------------------------------------------------------------------------------------------------
@@ -72,31 +91,31 @@ def latex_words(text):
                    for p in parts if p)
 
 
-def latex(title, nodes, stamp):
-    """Return the text/latex of a block of equations, one display a equation, its clause at the right margin."""
-    lines = [rf"$$\large\textbf{{{_bold(title)}}}\tag*{{stamp {stamp}}}$$"]
-    for node in nodes:
-        if node["type"] == "equation":
-            lines.append(_equation(node))
-        elif node["type"] in ("text", "message"):
-            lines.append("$$" + latex_words(node["text"]) + "$$")
-    return "\n\n".join(lines)
+def latex(nodes, stamp):
+    """Return the text/latex of a block: its equations aligned at the equal sign, each clause at the right margin.
+
+    One display holds a few equations only, since a page leaves a display of more than 5 kB unset.
+    """
+    rows = [_rows(node) for node in nodes if node["type"] == "equation"]
+    displays, size = [[]], 0
+    for row in rows:
+        if size + len(row) > _LARGEST_DISPLAY and displays[-1]:
+            displays.append([])
+            size = 0
+        displays[-1].append(row)
+        size += len(row)
+    made = ["$$\\begin{align*}\n" + " \\\\[4pt]\n".join(display) + "\n\\end{align*}$$" for display in displays]
+    made += [f"$${latex_words(node['text'])}$$" for node in nodes if node["type"] != "equation"]
+    return "\n\n".join([*made, f"stamp {stamp}"])
 
 
-def _bold(title):
-    return re.sub(r"([%#&_])", r"\\\1", title)
-
-
-def _equation(node):
+def _rows(node):
     tag = rf"\tag*{{${latex_words(node['cite'])}$}}" if node["cite"] else ""
-    first = f"{node['lhs']} &= {node['symbolic'] or node['result']}"
-    if node["note"] and not node["symbolic"]:
-        first += rf"\quad {latex_words(node['note'])}"
-    rows = [first + tag]
-    if node["symbolic"]:
-        note = rf"\quad {latex_words(node['note'])}" if node["note"] else ""
-        rows.append(f"&= {node['substituted']} = {node['result']}{note}")
-    return "$$\\begin{align*}\n" + " \\\\\n".join(rows) + "\n\\end{align*}$$"
+    note = rf"\quad {latex_words(node['note'])}" if node["note"] else ""
+    if not node["symbolic"]:
+        return f"{node['lhs']} &= {node['result']}{note}{tag}"
+    return (f"{node['lhs']} &= {node['symbolic']}{tag} \\\\\n"
+            f"&= {node['substituted']} = {node['result']}{note}")
 
 
 # --- Markdown ---------------------------------------------------------------------------------------------------

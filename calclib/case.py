@@ -3,6 +3,7 @@
 import hashlib
 import json
 import os
+import re
 import tempfile
 from dataclasses import dataclass
 from pathlib import Path
@@ -55,8 +56,12 @@ class Case:
         return "\n".join(lines) + "\n"
 
 
+# Characters that JSON leaves as they are, and YAML folds into a space or does not read.
+_ESCAPED = re.compile("[\x7f-\xa0\u2028\u2029\ud800-\udfff\ufeff\ufffe\uffff]")
+
+
 def _quoted(text):
-    return json.dumps(text, ensure_ascii=False)
+    return _ESCAPED.sub(lambda m: f"\\u{ord(m[0]):04x}", json.dumps(text, ensure_ascii=False))
 
 
 class _Texts(yaml.BaseLoader):
@@ -141,16 +146,20 @@ def load(path):
 def save(case, path=None):
     """Write the case file whole or not at all, and return the case as saved.
 
-    Raises CalcError if the file is not the one that was loaded: somebody else changed it meanwhile.
+    Raises CalcError if the file is not the one that was loaded: somebody else changed it meanwhile, or another case
+    has the name; and if the file cannot be written.
     """
     path = Path(path or case.path)
     content = case.yaml().encode("utf-8")
-    if path.exists():
-        present = hashlib.sha256(path.read_bytes()).hexdigest()
-        if present != case.file_digest:
-            raise CalcError(f"{path}: somebody else changed this case since it was opened. Nothing was saved. Save "
-                            "under another name, or open the case again.")
-    write_whole(path, content)
+    try:
+        if path.exists() and hashlib.sha256(path.read_bytes()).hexdigest() != case.file_digest:
+            if path == case.path:
+                raise CalcError(f"{path}: somebody else changed this case since it was opened. Nothing was saved. Save "
+                                "under another name, or open the case again.")
+            raise CalcError(f"{path}: another file has this name. Nothing was saved. Save under another name.")
+        write_whole(path, content)
+    except OSError as error:
+        raise CalcError(f"{path}: cannot be written: {error.strerror or error}. Nothing was saved.") from error
     return Case(case.kind, case.texts, case.revisions, path, hashlib.sha256(content).hexdigest())
 
 

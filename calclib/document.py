@@ -72,10 +72,15 @@ def _table(columns, rows, marks=None, caption=""):
             "marks": {str(k): v for k, v in (marks or {}).items()}, "caption": caption}
 
 
-def _figure(figure, alt, caption, vectors):
-    from calclib import sketch  # matplotlib is slow to import and many callers want numbers only
-    return {"type": "figure", "svg": sketch.svg(figure) if vectors else "",
-            "png": base64.b64encode(sketch.png(figure)).decode(), "alt": alt, "caption": caption, "width": 1.0}
+def _figure(make, alt, caption, vectors):
+    """Return a figure node. `vectors`: with SVG (True), PNG only (False), or its words only (None)."""
+    node = {"type": "figure", "svg": "", "png": "", "alt": alt, "caption": caption, "width": 1.0}
+    if vectors is not None:
+        from calclib import sketch  # matplotlib is slow to import and many callers want numbers only
+        figure = make()
+        node["png"] = base64.b64encode(sketch.png(figure)).decode()
+        node["svg"] = sketch.svg(figure) if vectors else ""
+    return node
 
 
 def summary(calc):
@@ -120,11 +125,10 @@ def loads(calc):
 
 def sketch_section(calc, vectors=True):
     from calclib import sketch
-    drawing = calc.case.kind.sketch(calc.x, calc)
-    governing = calc.governing.title
+    kind = calc.case.kind
     return [_section("sketch", "Sketch", [_figure(
-        sketch.draw(drawing), f"Dimensioned sketch of the {calc.case.kind.title.lower()}. {drawing.title}.",
-        f"To scale. Governing limit state: {governing}.", vectors)])]
+        lambda: sketch.draw(kind.sketch(calc.x, calc)), f"Dimensioned sketch of the {kind.title.lower()}, to scale.",
+        f"To scale. Governing limit state: {calc.governing.title}.", vectors)])]
 
 
 def strength(calc):
@@ -141,10 +145,9 @@ def block_nodes(calc, block):
             nodes.append({"type": "equation", "lhs": line.lhs, "symbolic": line.symbolic,
                           "substituted": line.substituted, "result": line.result, "cite": step.cite,
                           "note": step.note})
-    if block.available is not None:
-        words = "for comparison; it does not govern" if block.advisory else "acceptable" if block.passes else \
-            "NOT ACCEPTABLE"
-        nodes.append({"type": "text", "text": f"Ratio {units.ratio_text(block.ratio)}: {words}."})
+    if block.available is not None:  # the last equation is the ratio
+        nodes[-1]["note"] = "for comparison; it does not govern" if block.advisory else \
+            "at most 1: acceptable" if block.passes else "above 1: NOT ACCEPTABLE"
     return nodes
 
 
@@ -161,11 +164,9 @@ def detailing(calc):
 
 def sensitivity(calc, vectors=True):
     from calclib.explore import sensitivity as explore
-    nodes = []
-    for plot in calc.case.kind.plots:
-        made = explore.plot(calc, plot)
-        nodes.append(_figure(made.figure, made.alt, made.caption, vectors))
-    return [_section("sensitivity", "Sensitivity", nodes)]
+    made = [explore.Sensitivity(calc, plot) for plot in calc.case.kind.plots]
+    return [_section("sensitivity", "Sensitivity", [
+        _figure(each.figure, each.alt, each.caption, vectors) for each in made])]
 
 
 def assumptions(calc):

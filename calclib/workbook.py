@@ -25,6 +25,7 @@ from calclib.errors import CalcError, CaseErrors, EntryError, UnknownInput
 from calclib.members import KINDS
 
 SETTLE = 0.8  # seconds without a change until the drawings are stored as vectors too
+DRAWN = ("sketch_section", "sensitivity")  # groups of pictures
 _GROUPS = {group.__name__: group for group in document.SECTIONS}
 
 
@@ -69,6 +70,7 @@ class Workbook:
         self.lock = RLock()       # widget messages arrive on a second thread
         self._shown = {}          # (group, index) -> (display handle, bundle)
         self._timer = None
+        self._vouched = ""        # the stamps that the form was told last
         self._form = None
 
     # --- what the notebook calls
@@ -84,14 +86,14 @@ class Workbook:
     def show(self, group):
         """Show one group of sections, each as ordinary outputs that are replaced when an input changes."""
         with self.lock:
-            for index, bundle in enumerate(self._bundles(group, vectors=True)):
-                self._shown[group, index] = (_display(bundle), bundle)
+            for index, output in enumerate(self._outputs(group, vectors=True)):
+                self._shown[group, index] = (_display(output), output)
 
     def close(self):
         """Assert that the calc is consistent, and store the case and the record for the exporters."""
         with self.lock:
-            bundle = self._closing()
-            self._shown["close", 0] = (_display(bundle), bundle)
+            output = self._closing()
+            self._shown["close", 0] = (_display(output), output)
 
     # --- what the form calls
 
@@ -108,14 +110,14 @@ class Workbook:
             except CalcError as error:
                 status = str(error)
             else:
+                self._vouched = self._stamps_of_calc()
                 echo = document.echo(self.calc)
                 status = document.verdict(self.calc)["text"]
-                self._refresh(vectors=False)
-                self._settle_later()
+                self._later(0, self._refresh)  # after the answer, so that the form is never kept waiting
             if messages:
                 status = "The calc below is the last good one; see the message beside the field."
             return {"ok": not (messages or (status and not echo)), "messages": messages, "echo": echo,
-                    "stamp": " ".join(self._stamps()), "status": status}
+                    "stamp": self._vouched, "status": status}
 
     def _save(self):
         with self.lock:
@@ -134,39 +136,52 @@ class Workbook:
 
     # --- outputs
 
-    def _bundles(self, group, vectors):
-        sections = _GROUPS[group](self.calc) if group != "sensitivity" and group != "sketch_section" else \
-            _GROUPS[group](self.calc, vectors)
-        return [bundle for section in sections for bundle in bundles.bundles(section)]
+    def _outputs(self, group, vectors):
+        make, digest = _GROUPS[group], self.calc.case.digest
+        sections = make(self.calc, vectors) if group in DRAWN else make(self.calc)
+        return [output for section in sections for output in bundles.outputs(section, digest)]
 
-    def _refresh(self, vectors):
+    def _stamps_of_calc(self):
+        """Return the stamps of every output that the present calc will have; nothing is drawn for it."""
         groups = dict.fromkeys(group for group, _ in self._shown if group != "close")
-        for group in sorted(groups, key=lambda g: g in ("sketch_section", "sensitivity")):  # equations paint first
-            for index, bundle in enumerate(self._bundles(group, vectors)):
-                self._replace((group, index), bundle)
-        if vectors and ("close", 0) in self._shown:  # until then an export refuses: the stamps do not agree
-            self._replace(("close", 0), self._closing())
+        made = [output for group in groups if group not in DRAWN for output in self._outputs(group, False)]
+        captions = [output for group in groups if group in DRAWN
+                    for section in _GROUPS[group](self.calc, vectors=None)
+                    for output in bundles.outputs(section, self.calc.case.digest)]
+        return " ".join(dict.fromkeys(output.stamp for output in made + captions if output.stamp))
 
-    def _replace(self, key, bundle):
-        handle, before = self._shown[key]
-        if bundle != before:
-            handle.update(bundle, raw=True, metadata=bundles.metadata(bundle))
-            self._shown[key] = (handle, bundle)
-
-    def _stamps(self):
-        """Return the stamps of all outputs as they are shown now."""
-        return [bundle[bundles.SECTION]["stamp"] for _, bundle in self._shown.values() if bundles.SECTION in bundle]
-
-    def _settle_later(self):
-        if self._timer:
-            self._timer.cancel()
-        self._timer = Timer(SETTLE, self._settle)
-        self._timer.daemon = True
-        self._timer.start()
+    def _refresh(self):
+        """Replace what changed: words and equations first, then the pictures, and when all is quiet their vectors."""
+        with self.lock:
+            for drawn in (False, True):
+                for group in dict.fromkeys(group for group, _ in self._shown if (group in DRAWN) == drawn):
+                    self._replace_group(group, vectors=False)
+            self._later(SETTLE, self._settle)
 
     def _settle(self):
         with self.lock:
-            self._refresh(vectors=True)
+            for group in DRAWN:
+                self._replace_group(group, vectors=True)
+            self._replace(("close", 0), self._closing())
+
+    def _replace_group(self, group, vectors):
+        if group != "close":
+            for index, output in enumerate(self._outputs(group, vectors)):
+                self._replace((group, index), output)
+
+    def _replace(self, key, output):
+        handle, before = self._shown[key]
+        if output != before:
+            handle.update(output.data, raw=True, metadata=output.metadata)
+            self._shown[key] = (handle, output)
+
+    def _later(self, seconds, job):
+        """Do a job once no edit has come for a while; an edit that comes first starts the wait again."""
+        if self._timer:
+            self._timer.cancel()
+        self._timer = Timer(seconds, job)
+        self._timer.daemon = True
+        self._timer.start()
 
     def _closing(self):
         calc = self.calc
@@ -174,12 +189,13 @@ class Workbook:
         _assert_consistent(calc, made)
         words = (f"Inputs {calc.case.digest}. {len(calc.limit_states)} limit states, {len(calc.rules)} detailing rules. "
                  + document.verdict(calc)["text"])
-        return {"text/plain": words, bundles.CALC: {"document": document.cover(calc), "record": made,
-                                                    "case": calc.case.yaml(), "stamps": self._stamps()}}
+        stamps = [output.stamp for _, output in self._shown.values() if bundles.SECTION in output.data]
+        return bundles.Output({"text/plain": words, bundles.CALC: {
+            "document": document.cover(calc), "record": made, "case": calc.case.yaml(), "stamps": stamps}}, "")
 
 
-def _display(bundle):
-    return display(bundle, raw=True, display_id=True, metadata=bundles.metadata(bundle))
+def _display(output):
+    return display(output.data, raw=True, display_id=True, metadata=output.metadata)
 
 
 def _assert_consistent(calc, made):

@@ -94,18 +94,21 @@ class Issuer:
         _set_case(notebook, case_name)
         with tempfile.TemporaryDirectory(prefix="calc-") as folder:
             (Path(folder) / case_name).write_text(content, encoding="utf-8", newline="\n")
-            if self._client is None:
-                self._client = NotebookClient(notebook, kernel_name="python3", record_timing=False, timeout=120,
-                                              extra_arguments=QUIET)
-            client = self._client
-            client.nb = notebook
-            client.reset_execution_trackers()
-            with client.setup_kernel(cleanup_kc=False):
-                client.execute_cell(nbformat.v4.new_code_cell(_CLEAN.format(folder)), 0)
-                for index, cell in enumerate(notebook.cells):
-                    client.execute_cell(cell, index)
-                client.execute_cell(nbformat.v4.new_code_cell(_CLEAN.format(tempfile.gettempdir())), 0)
+            self._execute(nbformat.v4.new_notebook(cells=[nbformat.v4.new_code_cell(_CLEAN.format(folder))]))
+            self._execute(notebook)
+            self._execute(nbformat.v4.new_notebook(cells=[nbformat.v4.new_code_cell(
+                _CLEAN.format(tempfile.gettempdir()))]))  # Windows removes no folder that a process is in
         return _as_issued(notebook)
+
+    def _execute(self, notebook):
+        if self._client is None:
+            self._client = NotebookClient(notebook, kernel_name="python3", record_timing=False, timeout=120,
+                                          extra_arguments=QUIET)
+        self._client.nb = notebook
+        self._client.reset_execution_trackers()
+        with self._client.setup_kernel(cleanup_kc=False):
+            for index, cell in enumerate(notebook.cells):
+                self._client.execute_cell(cell, index)
 
 
 def _set_case(notebook, case_name):
