@@ -12,8 +12,8 @@ DIFFERENT, ALTERED, ERROR = 1, 3, 2
 
 
 def _parser():
-    parser = argparse.ArgumentParser(prog="python -m calclib", description="Calcs of steel tension members: issue them, "
-                                     "check them, read their results.")
+    parser = argparse.ArgumentParser(prog="python -m calclib", description="Calcs of steel tension members: issue "
+                                     "them, check them, read their results.")
     parser.add_argument("--version", action="version", version=f"calclib {__version__}")
     commands = parser.add_subparsers(dest="command", required=True, metavar="COMMAND")
 
@@ -76,7 +76,7 @@ def _fields(arguments):
     from calclib.members import KINDS
     if arguments.kind not in KINDS:
         raise CalcError(f'"{arguments.kind}" is not a kind of member; the kinds are: {", ".join(KINDS)}'
-                        + nearest(arguments.kind, KINDS))
+                        + (nearest(arguments.kind, KINDS) or "."))
     group = None
     for each in KINDS[arguments.kind].all_fields():
         if each.group != group:
@@ -88,10 +88,9 @@ def _fields(arguments):
 
 
 def _field_facts(each):
+    facts = []
     if each.dimension:
-        facts = [f"unit: {' or '.join(each.dimension.printed[s][0] for s in units.UNIT_SETS)}"]
-    else:
-        facts = []
+        facts.append(f"unit: {' or '.join(each.dimension.printed[s][0] for s in units.UNIT_SETS)}")
     facts.append(f"allowed: {each.allowed()}")
     default = each.default
     if isinstance(default, dict):
@@ -103,6 +102,8 @@ def _field_facts(each):
 def main(argv=None):
     """Run the command line and return the exit status."""
     arguments = _parser().parse_args(argv)
+    if hasattr(sys.stdout, "reconfigure"):     # a pipe on Windows has an encoding without half of the signs used here
+        sys.stdout.reconfigure(encoding="utf-8")
     try:
         return arguments.run(arguments)
     except CalcError as error:
