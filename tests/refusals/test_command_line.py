@@ -45,7 +45,8 @@ def test_fields_lists_every_input_with_unit_meaning_default_and_range(capsys, ki
 def test_fields_states_the_facts_of_a_field(capsys):
     _, out, _ = run(capsys, "fields", "pin_plate")
     for line in ("plate_thickness: Thickness of the plate at the pin.\n"
-                 "      unit: in or mm; allowed: above 0; required\n", "allowed: one of: LRFD, ASD; required\n", "allowed: one of: yes, no; default: yes\n",
+                 "      unit: in or mm; allowed: above 0; required\n", "allowed: one of: LRFD, ASD; required\n",
+                 "allowed: one of: yes, no; default: yes\n",
                  "allowed: one of: letter, A4; default: letter or A4\n", "unit: in or mm; allowed: above 0; optional\n",
                  "allowed: any text; required\n"):
         assert line in out
