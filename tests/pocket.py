@@ -77,11 +77,14 @@ def half_unit(digits):
 
 
 def read_number(latex, exact=False):
-    """Return the Number that is all of `latex`."""
-    match = re.fullmatch(_NUMBER, latex)
+    """Return the Number that is all of `latex`; it may be negative."""
+    match = re.fullmatch(_NUMBER, latex.removeprefix("-"))
     if not match:
         raise Wrong(f"{latex}: not a number")
-    return Number(match, exact)
+    number = Number(match, exact)
+    if latex.startswith("-"):
+        number.low, number.high = -number.high, -number.low
+    return number
 
 
 def _scan(latex, known):
