@@ -7,9 +7,10 @@ ran. Before a template is made, the lines are run once more on pint quantities, 
 """
 
 import re
+import sys
 from dataclasses import dataclass
 from functools import lru_cache
-from math import pi
+from math import inf, pi
 
 from handcalcs import global_config
 from handcalcs.handcalcs import LatexRenderer
@@ -51,6 +52,16 @@ class _Standin:
         return self.mark
 
 
+def _rendered(source, values):
+    """Return the renderer's LaTeX of some lines, and leave the recursion limit, which it raises, as it was."""
+    limit = sys.getrecursionlimit()
+    try:
+        return LatexRenderer("# Short\n" + source, values,
+                             {"precision": None, "sci_not": None, "override": ""}).render(dict(global_config._config))
+    finally:
+        sys.setrecursionlimit(limit)
+
+
 @lru_cache(512)
 def _templates(equation, unit_set, symbols):
     """Return one (lhs, symbolic, substituted) a line of `equation`, with marks in the places of values."""
@@ -61,8 +72,7 @@ def _templates(equation, unit_set, symbols):
     mark = {name: f"⟦{i}⟧" for i, name in enumerate(names)}
     values = {alias.get(name, name): _Standin(mark[name]) for name in names}
     values["pi"] = _Standin(r"\pi")
-    rendered = LatexRenderer("# Short\n" + source, values,
-                             {"precision": None, "sci_not": None, "override": ""}).render(dict(global_config._config))
+    rendered = _rendered(source, values)
     lines = [line for line in re.split(r"\\\\", re.sub(r"\\(?:begin|end)\{aligned\}|\$\$", "", rendered))
              if line.strip()]
     if len(lines) != len(equation.lines):
@@ -112,7 +122,8 @@ def _prove_units(equation, unit_set):
     space = {name: getattr(form, name) for name in form.FUNCTIONS} | {"pi": pi}
     floats = dict(space)
     for i, argument in enumerate(equation.arguments.values()):
-        value = 4 / (1 + 0.25 * i)  # any numbers do that differ; they fall, since a part stands behind its whole
+        # Any numbers in range do that differ; they fall, since a part stands behind its whole.
+        value = 4 / (1 + 0.25 * i) if argument.high == inf else (argument.low + argument.high) / 2
         floats[argument.name] = value
         space[argument.name] = quantity(value, argument.dimension.base[argument.unit_set or unit_set])
     for line, result in zip(equation.lines, equation.results.values(), strict=True):
