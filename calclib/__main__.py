@@ -2,6 +2,7 @@
 
 import argparse
 import json
+import os
 import sys
 from pathlib import Path
 
@@ -108,6 +109,9 @@ def main(argv=None):
         return arguments.run(arguments)
     except CalcError as error:
         print(error, file=sys.stderr)
+        return ERROR
+    except BrokenPipeError:  # whoever read the output has heard enough
+        os.dup2(os.open(os.devnull, os.O_WRONLY), sys.stdout.fileno())
         return ERROR
 
 

@@ -16,7 +16,7 @@ Everything here is words and numbers as printed; the numbers themselves are in `
 import base64
 
 from calclib import __version__, units
-from calclib.calc import CAUTION, FAILS, NOTE
+from calclib.calc import CAUTION, FAILS
 from calclib.typeset import typeset
 
 CAUTIONS = (

@@ -29,27 +29,13 @@ from matplotlib.textpath import text_to_path
 from matplotlib.transforms import Affine2D
 from PIL import Image
 
+from calclib.drawing import Named
+
 THIN, OBJECT, HEAVY = 0.5, 1.1, 2.2          # the three pens [pt]
 POINTS = {"in": 72.0, "mm": 72.0 / 25.4}     # points in a unit of length
 TEXT = 8.5                                   # height of ordinary words [pt]
 _ASCENT, _DESCENT, _PITCH = 0.78, 0.24, 1.22  # of the text height: above and below the base line, and line to line
 _RENDERING = RLock()                         # matplotlib's fonts and the figure's resolution serve one thread at a time
-
-
-@dataclass(frozen=True)
-class Named:
-    """A symbol and what it equals, written by the library; Named("d_h", "13/16 in") prints a d with the index h.
-
-    `symbol`: words such as "P_u" or "φ_t P_n"; what follows _ is an index, in braces or not. `value` and `before` print
-    as they are.
-    """
-
-    symbol: str
-    value: str = ""
-    before: str = ""
-
-    def __str__(self):
-        return " ".join(filter(None, (self.before, self.symbol, self.value and f"= {self.value}")))
 
 
 @dataclass(frozen=True)

@@ -187,8 +187,8 @@ class Workbook:
         calc = self.calc
         made = record.record(calc)
         _assert_consistent(calc, made)
-        words = (f"Inputs {calc.case.digest}. {len(calc.limit_states)} limit states, {len(calc.rules)} detailing rules. "
-                 + document.verdict(calc)["text"])
+        words = (f"Inputs {calc.case.digest}. {len(calc.limit_states)} limit states, {len(calc.rules)} detailing "
+                 f"rules. {document.verdict(calc)['text']}")
         stamps = [output.stamp for _, output in self._shown.values() if bundles.SECTION in output.data]
         return bundles.Output({"text/plain": words, bundles.CALC: {
             "document": document.cover(calc), "record": made, "case": calc.case.yaml(), "stamps": stamps}}, "")

@@ -3,11 +3,12 @@
 import json
 import os
 import shutil
+import sys
 import tempfile
 from pathlib import Path
 
-import nbformat
-from nbclient import NotebookClient
+from jupyter_client.manager import AsyncKernelManager
+from jupyter_core.utils import run_sync
 
 import calclib
 from calclib import case as cases
@@ -15,6 +16,8 @@ from calclib.bundles import CALC
 from calclib.calc import evaluate
 from calclib.errors import CalcError
 
+# What a workbook imports, so that the kernel has it by the time this process is ready.
+_PRELOAD = ["--IPKernelApp.exec_lines=import calclib.workbook, calclib.typeset, calclib.explore.sensitivity"]
 # The running kernel is emptied and moved to the folder of the calc before each workbook.
 _CLEAN = "get_ipython().reset(new_session=True)\nimport os as _os\n_os.environ['CALCLIB_BATCH'] = '1'\n_os.chdir({!r})"
 
@@ -38,21 +41,31 @@ class Issuer:
     """
 
     def __init__(self):
-        self._client = None
+        self._kernel = self._client = None
 
     def __enter__(self):
         return self
 
     def __exit__(self, *_):
-        if self._client is not None and self._client.km is not None:
-            self._client._cleanup_kernel()
+        if self._client is not None:
+            self._client.kc.stop_channels()
+        if self._kernel is not None:
+            run_sync(self._kernel.shutdown_kernel)(now=True)
+
+    def _start(self):
+        """Start the kernel. It gets going by itself while this process imports what it needs, which takes as long."""
+        if self._kernel is None:
+            self._kernel = AsyncKernelManager(kernel_name="python3")
+            run_sync(self._kernel.start_kernel)(extra_arguments=[*QUIET, *_PRELOAD])
 
     def build(self, case):
         """Return {file name: bytes} of an issued calc: PDF, HTML, executed notebook, record, case."""
+        calc = evaluate(case)
+        self._start()
+        _import_nbformat()
         from calclib.issuing import pages
         from calclib.issuing.html import write_html
         from calclib.issuing.pdf import write_pdf
-        calc = evaluate(case)
         name = f"{calc.x.calc_number}-rev-{calc.x.revision}"
         content = case.yaml()
         notebook = self._run(case.kind, f"{name}.yaml", content)
@@ -79,8 +92,8 @@ class Issuer:
         CalcError : the case has no number, or the revision is issued already with other content.
         """
         case = cases.load(case_path)
-        calc = evaluate(case)
         files = self.build(case)
+        calc = evaluate(case)
         folder = Path(to) / calc.x.calc_number / f"rev-{calc.x.revision}"
         if folder.exists():
             _refuse_if_different(folder, files)
@@ -90,6 +103,7 @@ class Issuer:
         return [folder / name for name in sorted(files, key=lambda n: order.index(Path(n).suffix))]
 
     def _run(self, kind, case_name, content):
+        import nbformat
         notebook = nbformat.read(workbook_of(kind), as_version=4)
         _set_case(notebook, case_name)
         with tempfile.TemporaryDirectory(prefix="calc-") as folder:
@@ -101,9 +115,9 @@ class Issuer:
         return _as_issued(notebook)
 
     def _execute(self, notebook):
+        from nbclient import NotebookClient
         if self._client is None:
-            self._client = NotebookClient(notebook, kernel_name="python3", record_timing=False, timeout=120,
-                                          extra_arguments=QUIET)
+            self._client = NotebookClient(notebook, km=self._kernel, record_timing=False, timeout=120)
         self._client.nb = notebook
         self._client.reset_execution_trackers()
         with self._client.setup_kernel(cleanup_kc=False):
@@ -111,8 +125,22 @@ class Issuer:
                 self._client.execute_cell(cell, index)
 
 
+def _import_nbformat():
+    """Import nbformat without the grammar of web addresses, which takes seconds to build and which no notebook needs.
+
+    jsonschema offers the check where rfc3987_syntax is installed, as JupyterLab does, and does without where it is not.
+    """
+    if "nbformat" not in sys.modules and "rfc3987_syntax" not in sys.modules:
+        sys.modules["rfc3987_syntax"] = None
+        try:
+            import nbformat  # noqa: F401
+        finally:
+            del sys.modules["rfc3987_syntax"]
+
+
 def _set_case(notebook, case_name):
     """Put the case into a cell behind the parameters, by the convention of papermill."""
+    import nbformat
     place = next(i for i, cell in enumerate(notebook.cells) if "parameters" in cell.metadata.get("tags", []))
     cell = nbformat.v4.new_code_cell(f"# Parameters of this run\ncase = {json.dumps(case_name, ensure_ascii=False)}\n")
     cell.id = "injected-parameters"

@@ -5,10 +5,10 @@ from math import cos, pi, sin, sqrt
 import numpy as np
 
 from calclib import units
+from calclib.drawing import Arrow, BreakLine, Circle, Dimension, Drawing, FailurePath, Leader, Named, Outline
 from calclib.equations.aisc360 import RUPTURE, YIELDING, members, pins
 from calclib.members.fields import NO, YES, Field, Kind, Plot, multiples
 from calclib.members.steel import refuse_stresses
-from calclib.sketch import Arrow, BreakLine, Circle, Dimension, Drawing, FailurePath, Leader, Named, Outline
 
 CLEARANCE = {"US": (1 / 32, 1 / 16), "SI": (1.0, 2.0)}   # D5.1(b), D5.2(b): printed as pairs, in and mm
 LARGE_PIN = {"US": 3.0, "SI": 75.0}                      # D5.2(b), 2022: larger clearance from this pin diameter

@@ -3,12 +3,12 @@
 import numpy as np
 
 from calclib import units
+from calclib.drawing import Arrow, Break, Dimension, Drawing, Leader, Named, Outline
 from calclib.equations import mechanics, threads
 from calclib.equations.aisc360 import RUPTURE, YIELDING, members, rods
 from calclib.errors import EntryError, with_article
 from calclib.members.fields import Field, Kind, Plot
 from calclib.members.steel import refuse_stresses
-from calclib.sketch import Arrow, Break, Dimension, Drawing, Leader, Named, Outline
 from calclib.tables import threads as threads_of
 
 BODY_RULE, STRESS_AREA_RULE = "0.75 Fu on body area", "Fu on tensile stress area"
