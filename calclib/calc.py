@@ -148,10 +148,13 @@ def at_least(a, b):
 
 
 class Run:
-    """The evaluator that a kind of member is handed. With `arrays`, inputs may be arrays and nothing is worded."""
+    """The evaluator that a kind of member is handed.
 
-    def __init__(self, x, arrays=False):
-        self.x, self.arrays = x, arrays
+    With `arrays`, inputs may be arrays; then, and when it is `silent`, no message and no rule is worded.
+    """
+
+    def __init__(self, x, arrays=False, silent=False):
+        self.x, self.arrays, self.silent = x, arrays, silent or arrays
         self.document, _, self.edition = x.standard.rpartition("-")
         self.method, self.units = x.method, x.units
         self.required = x.required_strength
@@ -191,7 +194,7 @@ class Run:
 
     def message(self, severity, text, cite="", when=True, **values):
         """Add a caution or note where `when` holds; values named in `text` are lengths unless already text."""
-        if not self.arrays and when:
+        if not self.silent and when:
             self.messages.append(Message(severity, self._words(text, values), self.cite(cite) if cite else ""))
 
     def caution(self, text, cite="", when=True, **values):
@@ -201,13 +204,13 @@ class Run:
         self.message(NOTE, text, cite, when, **values)
 
     def assume(self, text, cite="", when=True):
-        if not self.arrays and when:
+        if not self.silent and when:
             self.assumptions.append(Message(NOTE, text, self.cite(cite) if cite else ""))
 
     def rule(self, key, title, clause, meets, required, provided, severity=FAILS, remark="", applies=True, reason="",
              **values):
         """Add a detailing rule. `required` and `provided` are words in which values named are lengths."""
-        if self.arrays:
+        if self.silent:
             return
         status = "not applicable" if not applies else "meets" if meets else severity
         remark = reason if not applies else remark if not meets else ""
@@ -304,6 +307,8 @@ def sweep(case, **arrays):
     x, _ = read_inputs(case.kind, case.texts)
     arrays = {name: np.asarray(values, float) for name, values in arrays.items()}
     shape = np.broadcast_shapes(*(values.shape for values in arrays.values()))
+    if case.kind.pointwise:
+        return _sweep_points(case.kind, x, {n: np.broadcast_to(v, shape).ravel() for n, v in arrays.items()}, shape)
     run = Run(SimpleNamespace(**{**vars(x), **arrays}), arrays=True)
     for name, values in arrays.items():
         run.outside = run.outside | ~case.kind.field(name).allows(values)
@@ -311,3 +316,25 @@ def sweep(case, **arrays):
     outside = np.broadcast_to(run.outside, shape)
     return [Curve(block.key, block.title, np.where(outside, np.nan, np.broadcast_to(block.available, shape)),
                   block.required, block.advisory) for block in run.blocks if block.available is not None]
+
+
+def _sweep_points(kind, x, arrays, shape):
+    """Evaluate one point after the other, for a kind whose geometry is searched; refused points are NaN."""
+    base = Run(x, silent=True)
+    kind.evaluate(x, base)
+    shown = [block for block in base.blocks if block.available is not None]
+    available = {block.key: np.full(int(np.prod(shape)), np.nan) for block in shown}
+    fields = {name: kind.field(name) for name in arrays}
+    for i, point in enumerate(zip(*arrays.values(), strict=True)):
+        values = dict(zip(arrays, map(float, point), strict=True))
+        run = Run(SimpleNamespace(**{**vars(x), **values}), silent=True)
+        try:
+            if all(fields[name].allows(value) for name, value in values.items()):
+                kind.evaluate(run.x, run)
+        except CalcError:  # a sweep goes where the clause does not; there is no number there, and none is drawn
+            continue
+        for block in run.blocks:
+            if block.available is not None and block.key in available:
+                available[block.key][i] = block.available
+    return [Curve(block.key, block.title, available[block.key].reshape(shape), block.required, block.advisory)
+            for block in shown]

@@ -8,7 +8,7 @@ from types import SimpleNamespace
 import numpy as np
 
 from calclib import units
-from calclib.errors import CaseErrors, EntryError, UnknownInput, nearest
+from calclib.errors import CalcError, CaseErrors, EntryError, UnknownInput, nearest
 
 YES, NO = "yes", "no"
 
@@ -34,6 +34,7 @@ class Field:
     above: float | None = None    # the value must be greater, in the base unit
     least: float | None = None    # the value must be at least this
     search: bool = False          # a long list of choices, typed with search
+    reader: object = None         # (text) -> value, where the value is neither a number nor one of few words
 
     def default_text(self, unit_set):
         return self.default[unit_set] if isinstance(self.default, dict) else self.default
@@ -72,6 +73,11 @@ class Field:
                 raise EntryError(self.name, f"is empty; choose one of: {', '.join(self.choices)}")
             raise EntryError(self.name, "is empty; " + (f'write {self.label.lower()}' + (
                 f', such as "{example}"' if example else "")))
+        if self.reader:
+            try:
+                return self.reader(text)
+            except CalcError as error:
+                raise EntryError(self.name, str(error)) from error
         if self.choices:
             for choice in self.choices:
                 if choice.lower() == text.lower():
@@ -98,6 +104,7 @@ class Kind:
     evaluate: object              # (x, run) -> None: orders the equations against the evaluator handed in
     sketch: object                # (x, calc) -> sketch.Drawing
     plots: tuple                  # of Plot
+    pointwise: bool = False       # its geometry is searched, so a sweep evaluates one point after the other
 
     def all_fields(self):
         return (*PROJECT, *BASIS, *LOADS, *self.fields, *CLOSING)
