@@ -14,8 +14,8 @@ from calclib import units
 from calclib.equations.aisc360 import design
 from calclib.errors import CalcError, EntryError
 from calclib.members.fields import read_inputs
+from calclib.tolerance import at_most
 
-TOLERANCE = 1e-9  # relative; 1.3 * 6.0 is a hair above 7.8 in binary, and 7.8 must still be enough
 FAILS, CAUTION, NOTE = "fails", "caution", "note"
 
 
@@ -115,7 +115,7 @@ class Block:
 
     @property
     def passes(self):
-        return self.reason != "" or self.ratio <= 1 + TOLERANCE
+        return self.reason != "" or at_most(self.ratio, 1)
 
 
 @dataclass(frozen=True)
@@ -136,15 +136,6 @@ class Message:
     severity: str
     text: str
     cite: str = ""
-
-
-def at_least(a, b):
-    """Return whether a >= b within the tolerance of binary arithmetic.
-
-    >>> at_least(7.8, 1.3 * 6.0)
-    True
-    """
-    return a >= b - TOLERANCE * abs(b)
 
 
 class Run:
@@ -251,7 +242,7 @@ class Calc:
         """Return in words everything that fails, an empty list if the calc passes."""
         units_text = self.run.units
         over = [f"{b.title}: required {units.text(b.required, units.FORCE, units_text)} exceeds available "
-                f"{units.text(b.available, units.FORCE, units_text)}"
+                f"{units.text(b.available, units.FORCE, units_text)}, ratio {units.ratio_text(b.ratio)}"
                 for b in self.limit_states if not b.passes and not b.advisory]
         return over + [f"{r.title}: {r.cite} requires {r.required}; provided {r.provided}"
                        for r in self.rules if r.status == FAILS]

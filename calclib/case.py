@@ -152,19 +152,25 @@ def save(case, path=None):
     path = Path(path or case.path)
     content = case.yaml().encode("utf-8")
     try:
-        if path.exists() and hashlib.sha256(path.read_bytes()).hexdigest() != case.file_digest:
-            if path == case.path:
-                raise CalcError(f"{path}: somebody else changed this case since it was opened. Nothing was saved. Save "
-                                "under another name, or open the case again.")
-            raise CalcError(f"{path}: another file has this name. Nothing was saved. Save under another name.")
-        write_whole(path, content)
+        write_whole(path, content, lambda: _refuse_changed(path, case))
     except OSError as error:
         raise CalcError(f"{path}: cannot be written: {error.strerror or error}. Nothing was saved.") from error
     return Case(case.kind, case.texts, case.revisions, path, hashlib.sha256(content).hexdigest())
 
 
-def write_whole(path, content):
-    """Write bytes to a file so that it is either the old one or the new one, whenever the process is killed."""
+def _refuse_changed(path, case):
+    if path.exists() and hashlib.sha256(path.read_bytes()).hexdigest() != case.file_digest:
+        if path == case.path:
+            raise CalcError(f"{path}: somebody else changed this case since it was opened. Nothing was saved. Save "
+                            "under another name, or open the case again.")
+        raise CalcError(f"{path}: another file has this name. Nothing was saved. Save under another name.")
+
+
+def write_whole(path, content, check=lambda: None):
+    """Write bytes to a file so that it is either the old one or the new one, whenever the process is killed.
+
+    `check` is called last, when only the renaming is left, so that nobody else's change slips in between.
+    """
     handle, temporary = tempfile.mkstemp(prefix=f".{Path(path).name}.", dir=Path(path).parent)
     try:
         with os.fdopen(handle, "wb") as file:
@@ -172,6 +178,7 @@ def write_whole(path, content):
             file.flush()
             os.fsync(file.fileno())
         os.chmod(temporary, 0o644)
+        check()
         os.replace(temporary, path)
     except BaseException:
         Path(temporary).unlink(missing_ok=True)

@@ -9,6 +9,7 @@ from calclib.drawing import Arrow, BreakLine, Circle, Dimension, Drawing, Failur
 from calclib.equations.aisc360 import RUPTURE, YIELDING, members, pins
 from calclib.members.fields import NO, YES, Field, Kind, Plot, multiples
 from calclib.members.steel import refuse_stresses
+from calclib.tolerance import at_least, at_most
 
 CLEARANCE = {"US": (1 / 32, 1 / 16), "SI": (1.0, 2.0)}   # D5.1(b), D5.2(b): printed as pairs, in and mm
 LARGE_PIN = {"US": 3.0, "SI": 75.0}                      # D5.2(b), 2022: larger clearance from this pin diameter
@@ -73,8 +74,8 @@ def evaluate(x, run):
     if run.edition == "22":
         small, large = run.pair(CLEARANCE)
         C_r = part.choose("C_{r}", units.NUMBER, [
-            (_at_most(clearance, small), 1.0, _clearance_words(run, "at most", small)),
-            (_at_most(clearance, large), 0.95, _clearance_words(run, "above", small)),
+            (at_most(clearance, small), 1.0, _clearance_words(run, "at most", small)),
+            (at_most(clearance, large), 0.95, _clearance_words(run, "above", small)),
         ], run.cite("D5.1(b)"))
         P_n = part(pins.shear_rupture_with_hole_factor, F_u=x.F_u, C_r=C_r, A_sf=A_sf)
     else:
@@ -83,12 +84,11 @@ def evaluate(x, run):
 
     part = run.block("pin bearing", "Bearing on the pin")
     A_pb = part(pins.projected_bearing_area, d=d, t=t)
-    F_y = np.minimum(x.F_y, x.pin_F_y) if run.arrays else min(x.F_y, x.pin_F_y)
-    R_n = part(pins.pin_bearing, F_y=F_y, A_pb=A_pb)
+    F_y = part(pins.weaker_yield_stress, F_y=x.F_y, F_yp=x.pin_F_y)
+    R_n = part(pins.pin_bearing, F_y=F_y, A_pb=A_pb, symbols={"F_y": r"F_{y,\mathrm{min}}"})
     part.limit_state(RUPTURE, R_n, "R_{n}", "J7(a)")
-    run.note("Bearing takes the yield stress of the weaker of plate and pin: {F_y} of {plate} and {pin}. "
-             "That the weaker part counts is common practice.", "J7(a)", when=not run.arrays,
-             **{} if run.arrays else _stresses(run, F_y=F_y, plate=x.F_y, pin=x.pin_F_y))
+    run.note("Bearing takes the yield stress of the weaker of plate and pin. That the weaker part counts is common "
+             "practice.", "J7(a)")
 
     part = run.block("gross yielding", "Tensile yielding in the gross section")
     A_g = part(members.gross_area_of_plate, w=w, t=t)
@@ -102,10 +102,6 @@ def evaluate(x, run):
                           note="With the effective width before the limit by the edge, as advice only.")
     _rules(x, run, clearance, sides, a_min, w_min, w_min_uncapped)
     _messages(x, run, clearance)
-
-
-def _at_most(value, limit):
-    return value <= limit * (1 + 1e-9)
 
 
 def _length(run, value):
@@ -126,14 +122,14 @@ def _refuse(x, run, clearance):
     small, large = run.pair(CLEARANCE)
     limit = large if run.edition == "22" else small
     refuse_stresses(x, run, ("F_y", "pin_F_y"))
-    run.require(d_h >= d * (1 - 1e-9), "hole_diameter", "{d_h} is smaller than the pin of {d}; the pin does not enter. "
+    run.require(at_least(d_h, d), "hole_diameter", "{d_h} is smaller than the pin of {d}; the pin does not enter. "
                 "Enlarge the hole or use a smaller pin", d_h=d_h, d=d)
     run.require(d_h < w, "hole_diameter", "{d_h} is not smaller than the plate of {w}; no plate is left beside the "
                 "hole. Use a wider plate or a smaller pin", d_h=d_h, w=w)
     if x.side_distance is not None:
         run.require(x.side_distance + d_h < w, "side_distance", "hole and side distance of {b} reach beyond the edge "
                     "of the plate of {w}; give a smaller side distance or a wider plate", b=x.side_distance, w=w)
-    run.require(_at_most(clearance, limit), "hole_diameter",
+    run.require(at_most(clearance, limit), "hole_diameter",
                 "{d_h} is {clearance} larger than the pin; " + run.cite({"22": "D5.1(b)", "16": "D5.2(b)"})
                 + " covers up to {limit}. "
                 "Ream and bush the hole, or use a larger pin", d_h=d_h, clearance=clearance, limit=limit)
@@ -142,28 +138,28 @@ def _refuse(x, run, clearance):
 def _rules(x, run, clearance, sides, a_min, w_min, w_min_uncapped):
     """The detailing rules of D5.2, each with required and provided."""
     small, large = run.pair(CLEARANCE)
-    wide = run.edition == "22" and bool(np.all(x.pin_diameter >= run.pair(LARGE_PIN) * (1 - 1e-9)))
+    wide = run.edition == "22" and bool(np.all(at_least(x.pin_diameter, run.pair(LARGE_PIN))))
     allowed = large if wide else small
     off = abs(sides[0] - sides[1])
-    run.rule("hole midway", "Hole midway across the width", "D5.2(a)", _at_most(off, run.pair(CENTRING)),
+    run.rule("hole midway", "Hole midway across the width", "D5.2(a)", at_most(off, run.pair(CENTRING)),
              "sides equal within {tolerance}", "sides {b1} and {b2}",
              remark="The hole is off the centre line of the plate; relocate it or widen the plate on the short side.",
              tolerance=run.pair(CENTRING), b1=sides[0], b2=sides[1])
-    run.rule("clearance", "Clearance of hole and pin", "D5.2(b)", _at_most(clearance, allowed),
+    run.rule("clearance", "Clearance of hole and pin", "D5.2(b)", at_most(clearance, allowed),
              "at most {allowed}", "{clearance}", applies=x.movement == YES,
              remark="Use a hole of at most {largest}.", reason="no relative movement is expected at the pin",
              allowed=allowed, clearance=clearance, largest=x.pin_diameter + allowed)
-    run.rule("width", "Width at the pin", "D5.2(c)", x.plate_width >= w_min * (1 - 1e-9), "w at least {w_min}",
+    run.rule("width", "Width at the pin", "D5.2(c)", at_least(x.plate_width, w_min), "w at least {w_min}",
              "{w}", remark="Widen the plate.", w_min=w_min, w=x.plate_width)
     run.rule("width before the limit", "Width at the pin, before the limit by the edge", "D5.2(c)",
-             x.plate_width >= w_min_uncapped * (1 - 1e-9), "w at least {w_min}, as advice", "{w}", severity="caution",
+             at_least(x.plate_width, w_min_uncapped), "w at least {w_min}, as advice", "{w}", severity="caution",
              remark="the plate is narrower than the full effective width would use; the limited width is used "
                     "throughout.", w_min=w_min_uncapped, w=x.plate_width)
-    run.rule("end distance", "End distance", "D5.2(c)", x.end_distance >= a_min * (1 - 1e-9), "a at least {a_min}",
+    run.rule("end distance", "End distance", "D5.2(c)", at_least(x.end_distance, a_min), "a at least {a_min}",
              "{a}", remark="Lengthen the end.", a_min=a_min, a=x.end_distance)
     cut = x.corner_distance is not None
     run.rule("corner cut", "Corner cut at 45 degrees", "D5.2(d)",
-             not cut or x.corner_distance >= x.end_distance * (1 - 1e-9), "c at least a = {a}",
+             not cut or at_least(x.corner_distance, x.end_distance), "c at least a = {a}",
              "{c}" if cut else "square corners", applies=cut, reason="the corners are square",
              remark="Cut less off the corners.", a=x.end_distance, c=x.corner_distance if cut else "")
 

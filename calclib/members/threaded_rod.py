@@ -10,6 +10,7 @@ from calclib.errors import EntryError, with_article
 from calclib.members.fields import Field, Kind, Plot
 from calclib.members.steel import refuse_stresses
 from calclib.tables import threads as threads_of
+from calclib.tolerance import at_least
 
 BODY_RULE, STRESS_AREA_RULE = "0.75 Fu on body area", "Fu on tensile stress area"
 INCH_SERIES = ("UNC", "UNF", "8UN")
@@ -105,10 +106,14 @@ def _stress_area(x, run, part):
 
 
 def _pitch(x, run, part):
-    if run.arrays and x.pitch is not None:
-        return x.pitch
     sizes = threads_of(x.thread_series)
-    same = [thread for thread in sizes if abs(thread.d - x.rod_diameter) < 1e-6 * thread.d]
+    if run.arrays:
+        if x.pitch is not None:
+            return x.pitch
+        found = [_of_size(sizes, d) for d in np.ravel(x.rod_diameter)]  # between the sizes of a series is no thread
+        pitches = np.array([_standard_pitch(same[0]) if len(same) == 1 else np.nan for same in found])
+        return pitches.reshape(np.shape(x.rod_diameter))
+    same = _of_size(sizes, x.rod_diameter)
     names = ", ".join(thread.name for thread in same)
     if x.pitch is not None:
         run.caution(f"The pitch is not that of the {x.thread_series} series for this size"
@@ -125,6 +130,11 @@ def _pitch(x, run, part):
         raise EntryError("pitch", f"the {x.thread_series} series has more than one pitch for this size: {names}; "
                                   "give the pitch")
     return _standard_pitch(same[0])
+
+
+def _of_size(sizes, d):
+    """Return the threads of one nominal diameter."""
+    return [thread for thread in sizes if abs(thread.d - d) < 1e-6 * thread.d]
 
 
 def _standard_pitch(thread):
@@ -178,11 +188,12 @@ def _fitting(x, run):
 def _messages(x, run, A_b, A_t):
     d = x.rod_diameter
     run.caution("A rod of {d} is below {least}, the least diameter for rods that carry main loads by common practice.",
-                when=not run.arrays and d < run.pair(LEAST_DIAMETER) * (1 - 1e-9), d=d, least=run.pair(LEAST_DIAMETER))
+                when=not run.arrays and not at_least(d, run.pair(LEAST_DIAMETER)), d=d, least=run.pair(LEAST_DIAMETER))
     if not run.arrays:
         share = A_t / A_b
         run.caution(f"The tensile stress area is {units.trimmed(share, 3)} of the body area, below the 0.75 that the "
-                    "rule on the body area counts on; the rule on the stress area is the safer one here.", "Table J3.2",
+                    "rule on the body area counts on, so that this rule is not on the safe side here."
+                    + (" The rule on the stress area is." if run.edition == "22" else ""), "Table J3.2",
                     when=share < 0.75 and x.strength_rule == BODY_RULE)
     run.caution("F_u / F_y is below 1.1; the ductility that the clause counts on is small.",
                 when=not run.arrays and x.F_u < 1.1 * x.F_y)
@@ -253,15 +264,14 @@ def _pitches(x):
 def _present_pitch(x):
     if x.pitch is not None:
         return x.pitch
-    return next(_standard_pitch(thread) for thread in threads_of(x.thread_series)
-                if abs(thread.d - x.rod_diameter) < 1e-6 * thread.d)
+    return _standard_pitch(_of_size(threads_of(x.thread_series), x.rod_diameter)[0])
 
 
 def _standard_pitches(x):
     """Return the standard pitches of this diameter in every series of the unit set, to mark along the axis."""
     return [(_standard_pitch(thread), f"{_standard_pitch(thread):g} {series}") for series in SERIES
             if (series in INCH_SERIES) == (x.units == units.US)
-            for thread in threads_of(series) if abs(thread.d - x.rod_diameter) < 1e-6 * thread.d]
+            for thread in _of_size(threads_of(series), x.rod_diameter)]
 
 
 PLOTS = (

@@ -102,8 +102,12 @@ def test_an_altered_digit_of_a_result_does_not_come_out(name):
 
 @pytest.mark.parametrize("name", DEMOS)
 def test_an_altered_digit_of_a_value_or_constant_does_not_come_out(name):
-    """The first digit of every number that is put in, and of every number in the symbolic half."""
-    known = {}
+    """The first digit of every number that is put in, and of every number in the symbolic half.
+
+    The larger of two values in a minimum shows in no result; it is compared with where it stands before, among the
+    inputs here.
+    """
+    known = {r"F_{y,\mathrm{pin}}": r"75\ \mathrm{ksi}"} if name == "hanger_plate" else {}
     for lhs, symbolic, substituted, result in lines(VARIANTS[name]):
         for match in re.finditer(r"(?<![\d.{])\d", substituted):
             digit = str(int(match[0]) % 9 + 1)

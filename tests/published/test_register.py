@@ -23,6 +23,7 @@ UNPUBLISHED = {
     "ratio": "no example prints the ratio; a quotient, recomputed by the pocket-calculator test",
     "opposite_side_distance": "no published example of a hole off the centre line was found; geometry",
     "smaller_side_distance": "no published example of a hole off the centre line was found; the smaller of two",
+    "weaker_yield_stress": "no published example has a pin weaker than the plate; the smaller of two",
     "elongation_of_threaded_rod": "no published example of shank and thread in series was found; checked by the two "
                                   "limits of one bar in tests/honest/test_calc.py",
     "width_beside_gusset": HOLLOW,

@@ -208,6 +208,28 @@ def shear_rupture(F_u, A_sf):
     return P_n
 
 
+@equation(cite("J7(a)"), {"F_ymin": r"F_{y,\mathrm{min}}", "F_yp": r"F_{y,\mathrm{pin}}"})
+def weaker_yield_stress(F_y, F_yp):
+    """Return the yield stress that counts in bearing: that of the weaker of plate and pin.
+
+    Parameters
+    ----------
+    F_y : yield stress of the plate [ksi or MPa], positive
+    F_yp : yield stress of the pin [ksi or MPa], positive
+
+    Returns
+    -------
+    F_ymin : the smaller one [ksi or MPa]
+
+    Source: AISC 360-22 and 360-16 J7(a). That the weaker part counts is common practice.
+
+    >>> weaker_yield_stress(F_y=50, F_yp=36)
+    36
+    """
+    F_ymin = minimum(F_y, F_yp)
+    return F_ymin
+
+
 @equation(cite("J7(a)"))
 def projected_bearing_area(d, t):
     """Return the projected area in bearing of a pin on a plate.
