@@ -179,6 +179,28 @@ def greatest_stress(F_y):
     return F_max
 
 
+@equation(cite("Appendix 3.3", unread=("16",)), {"P_SRa": "P_{SR,a}"})
+def allowable_force_range(F_SR, A):
+    """Return the range of force that brings a detail to its allowable stress range.
+
+    Parameters
+    ----------
+    F_SR : allowable stress range [ksi or MPa], positive
+    A : area on which the detail is judged [in2 or mm2], positive
+
+    Returns
+    -------
+    P_SRa : allowable range of force at service load [kip or N]
+
+    Source: AISC 360-22 Appendix 3.2 and 3.3; 360-16 from memory.
+
+    >>> allowable_force_range(F_SR=10.0, A=4.0)
+    40.0
+    """
+    P_SRa = F_SR * A
+    return P_SRa
+
+
 @equation(cite("Appendix 3.3", unread=("16",)), {"ratio": r"\mathrm{ratio}"})
 def fatigue_ratio(f_SR, F_SR):
     """Return the ratio of a stress range to the allowable one.

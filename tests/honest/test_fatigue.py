@@ -59,4 +59,5 @@ def test_ranges_of_stress():
     assert fatigue.stress_range_with_reversal(P_t=60.0, P_c=20.0, A_n=4.0) == 20.0
     assert fatigue.stress_range_of_pretensioned_bolt(P_max=100.0, P_min=20.0, A_t=4.0) == pytest.approx(4.0)
     assert fatigue.fatigue_ratio(f_SR=12.0, F_SR=16.0) == 0.75
+    assert fatigue.allowable_force_range(F_SR=16.0, A=2.5) == 40.0
     assert fatigue.greatest_stress(F_y=50) == pytest.approx(33.0)

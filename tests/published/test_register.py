@@ -81,6 +81,7 @@ UNPUBLISHED = {
     "allowable_stress_range": FATIGUE,
     "allowable_stress_range_of_throat": FATIGUE,
     "greatest_stress": FATIGUE,
+    "allowable_force_range": FATIGUE,
     "fatigue_ratio": FATIGUE,
     "mean_stress_of_net_section": PRODUCT,
     "peak_stress_at_hole": PRODUCT,
