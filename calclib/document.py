@@ -156,7 +156,7 @@ def detailing(calc):
         return []
     marks = {i: rule.status for i, rule in enumerate(calc.rules) if rule.status in (FAILS, CAUTION)}
     rows = [[rule.title, rule.cite, rule.required, rule.provided,
-             rule.status + (f". {rule.remark}" if rule.remark else "")] for rule in calc.rules]
+             rule.status + (f": {rule.remark}" if rule.remark else "")] for rule in calc.rules]
     return [_section("detailing", "Detailing rules", [_table(
         [("Rule", "left"), ("Clause", "left"), ("Required", "left"), ("Provided", "left"), ("Status", "left")],
         rows, marks)])]
@@ -172,7 +172,7 @@ def sensitivity(calc, vectors=True):
 def assumptions(calc):
     items = [_cited(m) for m in (*calc.assumptions, *calc.notes)]
     if calc.x.remarks:
-        items += [line.strip() for line in calc.x.remarks.splitlines() if line.strip()]
+        items += [f"Remark of the engineer: {line.strip()}" for line in calc.x.remarks.splitlines() if line.strip()]
     return [_section("assumptions", "Assumptions and notes", [{"type": "list", "items": items}])]
 
 

@@ -143,25 +143,25 @@ def _rules(x, run, clearance, sides, a_min, w_min, w_min_uncapped):
     off = abs(sides[0] - sides[1])
     run.rule("hole midway", "Hole midway across the width", "D5.2(a)", at_most(off, run.pair(CENTRING)),
              "sides equal within {tolerance}", "sides {b1} and {b2}",
-             remark="The hole is off the centre line of the plate; relocate it or widen the plate on the short side.",
+             remark="the hole is off the centre line of the plate; relocate it or widen the plate on the short side.",
              tolerance=run.pair(CENTRING), b1=sides[0], b2=sides[1])
     run.rule("clearance", "Clearance of hole and pin", "D5.2(b)", at_most(clearance, allowed),
              "at most {allowed}", "{clearance}", applies=x.movement == YES,
-             remark="Use a hole of at most {largest}.", reason="no relative movement is expected at the pin",
+             remark="use a hole of at most {largest}.", reason="no relative movement is expected at the pin",
              allowed=allowed, clearance=clearance, largest=x.pin_diameter + allowed)
     run.rule("width", "Width at the pin", "D5.2(c)", at_least(x.plate_width, w_min), "w at least {w_min}",
-             "{w}", remark="Widen the plate.", w_min=w_min, w=x.plate_width)
+             "{w}", remark="widen the plate.", w_min=w_min, w=x.plate_width)
     run.rule("width before the limit", "Width at the pin, before the limit by the edge", "D5.2(c)",
              at_least(x.plate_width, w_min_uncapped), "w at least {w_min}, as advice", "{w}", severity="caution",
              remark="the plate is narrower than the full effective width would use; the limited width is used "
                     "throughout.", w_min=w_min_uncapped, w=x.plate_width)
     run.rule("end distance", "End distance", "D5.2(c)", at_least(x.end_distance, a_min), "a at least {a_min}",
-             "{a}", remark="Lengthen the end.", a_min=a_min, a=x.end_distance)
+             "{a}", remark="lengthen the end.", a_min=a_min, a=x.end_distance)
     cut = x.corner_distance is not None
     run.rule("corner cut", "Corner cut at 45 degrees", "D5.2(d)",
              not cut or at_least(x.corner_distance, x.end_distance), "c at least a = {a}",
              "{c}" if cut else "square corners", applies=cut, reason="the corners are square",
-             remark="Cut less off the corners.", a=x.end_distance, c=x.corner_distance if cut else "")
+             remark="cut less off the corners.", a=x.end_distance, c=x.corner_distance if cut else "")
 
 
 def _messages(x, run, clearance):
@@ -255,9 +255,16 @@ def _hole_range(x):
     return {"hole_diameter": np.linspace(x.pin_diameter, x.pin_diameter + 1.5 * large, 199)}
 
 
+def _width_range(x):
+    """Return plate widths, and with them edge distances, from little beside the hole to half as wide again."""
+    least = x.hole_diameter + (0 if x.side_distance is None else x.side_distance)
+    return {"plate_width": np.linspace(least + 0.1 * (x.plate_width - least), 1.5 * x.plate_width, 200)}
+
+
 PLOTS = (
     Plot("hole_diameter", _hole_range),
     Plot("end_distance", multiples("end_distance", 0.4, 1.7)),
+    Plot("plate_width", _width_range),
     Plot("plate_thickness", multiples("plate_thickness", 0.4, 1.8)),
 )
 
