@@ -34,6 +34,7 @@ class Field:
     above: float | None = None    # the value must be greater, in the base unit
     least: float | None = None    # the value must be at least this
     search: bool = False          # a long list of choices, typed with search
+    pattern: str = ""             # in words, what a text must look like
     reader: object = None         # (text) -> value, where the value is neither a number nor one of few words
 
     def default_text(self, unit_set):
@@ -50,11 +51,13 @@ class Field:
         >>> Field("t", "t", "g", "m", dimension=units.LENGTH, above=0).allowed()
         'above 0'
         """
-        if self.choices:
+        if self.choices and not self.search:
             return "one of: " + ", ".join(self.choices)
         if self.above is not None:
             return f"above {self.above:g}"
-        return f"at least {self.least:g}" if self.least is not None else "any text" if not self.dimension else "any"
+        if self.least is not None:
+            return f"at least {self.least:g}"
+        return self.pattern or ("any value" if self.dimension else "any text")
 
     def allows(self, value):
         """Return whether a number, or each of an array, keeps the lower limit of the field; NaN does not."""
@@ -132,14 +135,17 @@ def multiples(name, low, high, count=200):
     return lambda x: {name: np.linspace(low * getattr(x, name), high * getattr(x, name), count)}
 
 
+FILE_NAME = "letters, digits, dot, dash and underscore"
 PROJECT = (
     Field("project", "Project", "Project", "Project name as it stands on the title block."),
     Field("client", "Client", "Project", "For whom the calc is made.", optional=True),
     Field("firm", "Firm", "Project", "Firm that makes the calc.", optional=True),
-    Field("calc_number", "Calc number", "Project", "Number of this calc; names the issue folder."),
+    Field("calc_number", "Calc number", "Project", "Number of this calc; names the issue folder.",
+          pattern=FILE_NAME),
     Field("subject", "Subject", "Project", "Member and place, such as a mark and gridline."),
-    Field("revision", "Revision", "Project", "Revision of the calc.", default="0"),
-    Field("date", "Date", "Project", "Date of this revision, year-month-day."),
+    Field("revision", "Revision", "Project", "Revision of the calc.", default="0", pattern=FILE_NAME),
+    Field("date", "Date", "Project", "Date of this revision, year-month-day.",
+          pattern="year-month-day, such as 2026-11-20"),
     Field("prepared_by", "Prepared by", "Project", "Who prepared the calc."),
     Field("checked_by", "Checked by", "Project", "Who checks the calc; left empty until checked.", optional=True),
 )
