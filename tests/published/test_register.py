@@ -42,6 +42,8 @@ UNPUBLISHED = {
     "effective_net_area_of_splice_plate": NO_EXAMPLE,
     "block_shear_factor": NO_EXAMPLE,
     "spread_width_in_tension": NO_EXAMPLE,
+    "spread_width_within_plate": NO_EXAMPLE,
+    "area_of_two_cuts": "the examples add in words; a sum",
     "shear_stress_in_long_joint": NO_EXAMPLE,
     "stress_with_long_grip": NO_EXAMPLE,
     "slip_factor_with_tension_lrfd": NO_EXAMPLE,

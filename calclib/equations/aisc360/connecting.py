@@ -267,3 +267,49 @@ def spread_width_in_tension(w_0, L_s, theta):
     """
     w_s = w_0 + 2 * L_s * tan(theta)
     return w_s
+
+
+@equation(WHITMORE)
+def spread_width_within_plate(w_s, w_0, e_1, e_2):
+    """Return the part of the width of spread that lies within the plate.
+
+    Parameters
+    ----------
+    w_s : width of spread [in or mm], positive
+    w_0 : distance between the outer lines of fasteners, or width of the weld group [in or mm], not negative
+    e_1 : from the lower outer line to the edge of the plate [in or mm], not negative
+    e_2 : from the upper outer line to the edge of the plate [in or mm], not negative
+
+    Returns
+    -------
+    w_e : width of spread within the plate [in or mm]
+
+    Source: common practice, from memory: what would lie outside the plate is not there.
+
+    >>> spread_width_within_plate(w_s=14.0, w_0=4.0, e_1=3.0, e_2=6.0)
+    12.0
+    """
+    w_e = w_0 + minimum((w_s - w_0) / 2, e_1) + minimum((w_s - w_0) / 2, e_2)
+    return w_e
+
+
+@equation(cite("J4.3"))
+def area_of_two_cuts(A_1, A_2):
+    """Return the area of cuts of two kinds.
+
+    Parameters
+    ----------
+    A_1 : area of the first [in2 or mm2], positive
+    A_2 : area of the others [in2 or mm2], positive
+
+    Returns
+    -------
+    A : area of both [in2 or mm2]
+
+    Source: AISC 360-22 and 360-16 J4.3: the areas of a path are added.
+
+    >>> area_of_two_cuts(A_1=4.0, A_2=1.5)
+    5.5
+    """
+    A = A_1 + A_2
+    return A
