@@ -2,27 +2,29 @@
 
 The inputs are read from the file as data, the calc is issued again from them with the installed library, and the two
 are compared. No code from the file is run.
+
+Where the record agrees and the calc was made with what is installed here, the file must be what is issued again, down
+to the last stroke. Where it does not, the file is compared with what it carries itself (so that a print altered by hand
+is still told from a result that a library computes otherwise), and its notebook number by number with the one issued
+again.
 """
 
-import base64
-import binascii
-import difflib
-import hashlib
-import io
 import json
 import re
+from collections import Counter
 from dataclasses import dataclass, field
-from html.parser import HTMLParser
 from pathlib import Path
 
-from calclib import __version__, units
+from calclib import __version__, bundles, comparing
 from calclib import case as cases
-from calclib.bundles import CALC
+from calclib.carried import READERS, carried_by, read_json, read_pdf, reading
 from calclib.errors import CalcError
 
 IDENTICAL, DIFFERS, ALTERED = "identical", "differs", "altered"
 _ORDER = (IDENTICAL, DIFFERS, ALTERED)
-_SHOWN = 12  # differences named in a report; the rest is counted
+_SHOWN = 12            # differences named in a report; the rest is counted
+_WRITERS = (".pdf", ".html")
+_ATTACHED = (".yaml", ".json", ".ipynb")   # in this order
 
 
 @dataclass
@@ -34,6 +36,7 @@ class Report:
     issued_with: str = ""
     findings: list = field(default_factory=list)   # (status, words)
     remarks: list = field(default_factory=list)
+    numbers_only: bool = False                     # made with other versions: layout and drawings are not compared
 
     def find(self, status, words):
         self.findings.append((status, words))
@@ -43,24 +46,22 @@ class Report:
         return max((status for status, _ in self.findings), key=_ORDER.index, default=IDENTICAL)
 
     def text(self):
-        """Return the report in words."""
-        lines = [f"{self.name}: {self.status.upper()}",
+        """Return the report in words. Text from the file is data, and cannot steer a terminal."""
+        from calclib.issuing.pages import printable
+        status = self.status.upper()
+        if self.numbers_only and not self.findings:
+            status = "NUMBERS IDENTICAL, layout and drawings not compared"
+        lines = [f"{self.name}: {status}",
                  f"inputs {self.digest}, issued with calclib {self.issued_with}, checked with calclib {__version__}"]
-        lines += [f"  {status}: {words}" for status, words in self.findings[:_SHOWN]]
-        if len(self.findings) > _SHOWN:
-            lines.append(f"  and {len(self.findings) - _SHOWN} more")
-        if not self.findings:
+        findings = sorted(self.findings, key=lambda each: -_ORDER.index(each[0]))
+        lines += [f"  {status}: {words}" for status, words in findings[:_SHOWN]]
+        if len(findings) > _SHOWN:
+            counts = Counter(status for status, _ in findings[_SHOWN:])
+            lines.append("  and " + ", ".join(f"{count} more of {status}" for status, count in counts.items()))
+        if not findings:
             lines.append("  every number of the record and every result printed agree with the recomputed calc")
-        return "\n".join(lines + [f"  note: {remark}" for remark in self.remarks])
-
-
-@dataclass(frozen=True)
-class Carried:
-    """What an issued file carries for the checker."""
-
-    case: cases.Case
-    record: dict
-    files: dict        # name -> bytes of everything attached
+        lines += [f"  note: {remark}" for remark in dict.fromkeys(self.remarks)]
+        return "\n".join(printable(" ".join(line.splitlines())) for line in lines)
 
 
 def check(path, issuer=None):
@@ -72,160 +73,148 @@ def check(path, issuer=None):
     """
     from calclib.issuing.issue import Issuer
     path = Path(path)
-    if not path.exists():
-        raise CalcError(f"{path}: no such file or folder.")
     if issuer is None:
         with Issuer() as started:
             return check(path, started)
-    members = sorted(p for p in path.iterdir() if p.suffix in _READERS) if path.is_dir() else [path]
-    if not members:
-        raise CalcError(f"{path}: holds no issued calc (no PDF, HTML page, notebook or record).")
-    carried = {member: _carried(member) for member in members}
-    first = carried[members[0]]
-    report = Report(str(path), first.case.digest, str(first.record.get("calclib")))
-    expected = {}
-    for member, each in carried.items():
-        if each.case.digest not in expected:
-            expected[each.case.digest] = issuer.build(each.case)
-        _compare(member, each, expected[each.case.digest], report)
     if path.is_dir():
-        _compare_case_file(path, first, report)
+        return _check_folder(path, issuer)
+    carried = carried_by(path)
+    report = _report(path, carried)
+    _compare(carried, _built(carried, issuer, report), report)
     return report
 
 
-# --- what a file carries ---------------------------------------------------------------------------------------
+def _report(path, carried):
+    return Report(str(path), carried.case.digest, str(carried.record.get("calclib")))
 
-def _carried(path):
-    content = path.read_bytes()
-    if path.suffix not in _READERS:
-        raise CalcError(f"{path}: is not a PDF, HTML page, notebook or record, so no issued calc.")
-    files = _READERS[path.suffix](path, content)
-    case = next((v for k, v in files.items() if k.endswith(".yaml")), None)
-    record = next((v for k, v in files.items() if k.endswith(".json")), None)
-    if case is None and record is None:
-        raise CalcError(f"{path}: carries no case and no record, so it is no issued calc, or they were removed. "
-                        "Ask for the file as it was issued.")
-    if case is None or record is None:
-        raise CalcError(f"{path}: carries no {'case' if case is None else 'record'}; it cannot be checked. "
-                        "Ask for the file as it was issued.")
+
+def _check_folder(folder, issuer):
+    """Check every file of a revision's folder, and that it holds what was issued and nothing else."""
+    from calclib.issuing.issue import LEFT_BY_SYSTEMS
+    present = {path.name: path for path in sorted(folder.iterdir()) if path.name not in LEFT_BY_SYSTEMS}
+    members = [path for path in present.values() if path.suffix.lower() in READERS]
+    if not members:
+        raise CalcError(f"{folder}: holds no issued calc (no PDF, HTML page, notebook or record). Name the folder of "
+                        "one revision.")
+    readable, refusals = [], []
+    for path in members:
+        try:
+            readable.append(carried_by(path))
+        except CalcError as error:
+            refusals.append(error)
+    if not readable:
+        raise refusals[0]
+    first = readable[0]
+    report = _report(folder, first)
+    for error in refusals:
+        report.find(ALTERED, str(error))
+    expected = _built(first, issuer, report)
+    for name in [name for name in expected if name not in present]:
+        report.find(ALTERED, f"{name} is missing from the folder")
+    for name in [name for name in present if name not in expected]:
+        report.find(ALTERED, f"{name} is not part of the issue")
+    for each in readable:
+        if each.record != first.record or each.case.yaml() != first.case.yaml():
+            report.find(ALTERED, f"{each.name}: carries other inputs or another record than {first.name}")
+        same = each.case.yaml() == first.case.yaml()
+        _compare(each, expected if same else _built(each, issuer, report), report)
+    for path in [path for path in present.values() if path.suffix == ".yaml"]:
+        _compare_case_file(path, expected, first, report)
+    return report
+
+
+def _built(carried, issuer, report):
+    """Return what is issued again from the inputs carried; inputs changed after issue may allow nothing."""
+    if carried.record.get("digest") == carried.case.digest:
+        return issuer.build(carried.case)
+    report.find(ALTERED, f"{carried.name}: the inputs have the digest {carried.case.digest}, the record says "
+                         f"{carried.record.get('digest')}: inputs or record were changed after issue")
     try:
-        data = json.loads(record)
-    except ValueError as error:
-        raise CalcError(f"{path}: the record it carries is not readable: {error}.") from error
-    if not isinstance(data, dict) or "results" not in data:
-        raise CalcError(f"{path}: what it carries as record is no record of a calc.")
-    return Carried(cases.parse(case.decode("utf-8", "replace"), f"the case in {path.name}"), data, files)
-
-
-def _from_pdf(path, content):
-    reader = _reader(path, content)
-    return {name: parts[0] for name, parts in reader.attachments.items()}
-
-
-def _reader(path, content):
-    import pypdf
-    from pypdf.errors import PyPdfError
-    try:
-        reader = pypdf.PdfReader(io.BytesIO(content))
-        len(reader.pages)
-    except (PyPdfError, ValueError, KeyError, OSError) as error:
-        raise CalcError(f"{path}: is not a readable PDF: {error}.") from error
-    return reader
-
-
-class _Links(HTMLParser):
-    def __init__(self):
-        super().__init__()
-        self.files = {}
-
-    def handle_starttag(self, tag, attributes):
-        named = dict(attributes)
-        if tag == "a" and "download" in named and (named.get("href") or "").startswith("data:"):
-            data = named["href"].partition(",")[2]
-            self.files[named["download"]] = base64.b64decode(data, validate=True)
-
-
-def _from_html(path, content):
-    parser = _Links()
-    try:
-        parser.feed(content.decode("utf-8"))
-    except (UnicodeDecodeError, binascii.Error) as error:
-        raise CalcError(f"{path}: is not a page as it was issued: {error}.") from error
-    return parser.files
-
-
-def _from_notebook(path, content):
-    for output in _outputs(_json(path, content)):
-        if CALC in output.get("data", {}):
-            stored = output["data"][CALC]
-            return {"case.yaml": stored["case"].encode(), "record.json": json.dumps(stored["record"]).encode()}
-    return {}
-
-
-def _json(path, content):
-    try:
-        return json.loads(content)
-    except ValueError as error:
-        raise CalcError(f"{path}: is not readable: {error}.") from error
-
-
-def _outputs(notebook):
-    return [output for cell in notebook.get("cells", []) for output in cell.get("outputs", [])]
-
-
-def _from_record(path, content):
-    data = _json(path, content)
-    if not isinstance(data, dict) or "inputs" not in data:
-        raise CalcError(f"{path}: is no record of a calc.")
-    case = cases.from_record(data)
-    return {"record.json": content, "case.yaml": case.yaml().encode()}
-
-
-_READERS = {".pdf": _from_pdf, ".html": _from_html, ".ipynb": _from_notebook, ".json": _from_record}
+        return issuer.build(carried.case)
+    except CalcError as error:
+        report.find(ALTERED, f"{carried.name}: nothing can be computed from the inputs: {error}")
+        return {}
 
 
 # --- comparing -------------------------------------------------------------------------------------------------
 
-def _compare(path, carried, expected, report):
+def _compare(carried, expected, report):
     """Compare one file with the calc issued again from its own inputs."""
-    suffix = path.suffix
-    again = next(content for name, content in expected.items() if name.endswith(suffix))
-    content = path.read_bytes()
-    record = json.loads(next(v for k, v in expected.items() if k.endswith(".json")))
-    if carried.record.get("digest") != carried.case.digest:
-        report.find(ALTERED, f"{path.name}: the inputs have the digest {carried.case.digest}, the record says "
-                             f"{carried.record.get('digest')}: inputs or record were changed after issue")
-    if content == again:
+    if not expected:
         return
-    _compare_records(path, carried.record, record, report)
-    before = len(report.findings)
-    if carried.record.get("calclib") == __version__:
-        _PRINTS[suffix](path, content, again, report)
-        if len(report.findings) == before and report.status == IDENTICAL:
-            report.remarks.append(f"{path.name}: the bytes are not as issued (signed, stamped or saved again); every "
-                                  "number, print and drawing is.")
-    else:
-        _compare_prints_with_record(path, content, carried.record, report)
-        report.remarks.append(f"{path.name}: issued with another version; layout and drawings are not compared.")
+    again = _of(expected, carried.suffix)
+    if carried.content == again:
+        return
+    record, notebook = json.loads(_of(expected, ".json")), json.loads(_of(expected, ".ipynb"))
+    same_results = not _compare_records(carried, record, report)
+    made_with = _made_with(carried)
+    same_tools = made_with == notebook["metadata"]["calclib"]
+    if not same_tools:
+        report.numbers_only = True
+        others = ", ".join(f"{name} {version}" for name, version in made_with.items()
+                           if notebook["metadata"]["calclib"].get(name) != version)
+        report.remarks.append(f"{carried.name}: issued with {others[:200]}; layout, drawings and marks over the "
+                              "page are compared only where the same versions are installed")
+    with reading(carried.name, "a calc"):
+        if same_results and same_tools:
+            before = len(report.findings)
+            _compare_whole(carried, again, expected, report)
+            if len(report.findings) == before:
+                report.remarks.append(f"{carried.name}: the bytes are not as issued (signed, or saved again); every "
+                                      "number, print and drawing is")
+        elif carried.notebook is not None:
+            _compare_with_itself(carried, report)
+            _compare_notebooks(carried, notebook, same_tools, ALTERED if same_results else DIFFERS, report)
+            if carried.suffix in _WRITERS:
+                _compare_with_carried(carried, same_tools, report)
 
 
-def _compare_records(path, found, again, report):
-    for key, label in (("limit_states", "limit state"), ("rules", "rule")):
-        old = {row.get("key"): row for row in found.get("results", {}).get(key, [])}
-        new = {row["key"]: row for row in again["results"][key]}
-        for name in [*new, *(name for name in old if name not in new)]:
-            if name not in old or name not in new:
-                report.find(DIFFERS, f"{path.name}: {label} {name} stands only in the "
-                                     f"{'recomputed calc' if name in new else 'record'}")
-                continue
-            for entry, value in new[name].items():
-                if old[name].get(entry) != value:
-                    report.find(DIFFERS, f"{path.name}: {label} {name}, {entry}: record {old[name].get(entry)}, "
-                                         f"recomputed {value}" + _by(old[name].get(entry), value))
-    if found != again and not any(words.startswith(path.name) for _, words in report.findings):
-        for place, old, new in _leaves(found, again):
-            if place != "calclib":
-                report.find(DIFFERS, f"{path.name}: record, {place}: {old}, recomputed {new}" + _by(old, new))
+def _of(files, suffix):
+    return next(content for name, content in files.items() if name.endswith(suffix))
+
+
+def _made_with(carried):
+    """Return the versions that made a calc; a record by itself knows calclib's only, and has no layout."""
+    if carried.notebook is None:
+        from calclib.issuing.issue import made_with
+        return {**made_with(), "calclib": carried.record.get("calclib")}
+    with reading(carried.name, "a notebook"):
+        return dict(carried.notebook["metadata"]["calclib"])
+
+
+def _compare_records(carried, again, report):
+    """Report each number of the record that is computed otherwise, and return whether there is any."""
+    found = [(place, old, new) for place, old, new in comparing.leaves(_by_key(carried.record), _by_key(again))
+             if place != "calclib"]
+    for place, old, new in found:
+        report.find(DIFFERS, f"{carried.name}: {_named(place, again)}: record {_brief(old)}, recomputed {_brief(new)}"
+                    + _by(old, new))
+    return bool(found)
+
+
+def _by_key(record):
+    """Name limit states and rules by their keys, so that a new one does not shift all that follow."""
+    made = {**record, "results": dict(record["results"])}
+    for name in ("limit_states", "rules"):
+        rows = made["results"].get(name)
+        if isinstance(rows, list) and all(isinstance(row, dict) and isinstance(row.get("key"), str) for row in rows):
+            by_key = {row["key"]: row for row in rows}
+            if len(by_key) == len(rows):
+                made["results"] |= {name: by_key, f"order of {name}": list(by_key)}
+    return made
+
+
+def _named(place, record):
+    for group, word in (("limit_states", "limit state"), ("rules", "rule")):
+        for row in record["results"][group]:
+            start = f"results.{group}.{row['key']}"
+            if place == start or place.startswith(start + "."):
+                return f"{word} \"{row['title']}\"" + place[len(start):].replace(".", ", ", 1)
+    return place
+
+
+def _brief(value):
+    return json.dumps(value, ensure_ascii=False)[:160]
 
 
 def _by(old, new):
@@ -234,132 +223,165 @@ def _by(old, new):
     return ""
 
 
-def _leaves(old, new, place=""):
-    """Yield (place, old, new) of every leaf in which two pieces of plain data differ."""
-    if isinstance(old, dict) and isinstance(new, dict):
-        for key in {**old, **new}:
-            yield from _leaves(old.get(key), new.get(key), f"{place}.{key}".lstrip("."))
-    elif isinstance(old, list) and isinstance(new, list) and len(old) == len(new):
-        for i, (a, b) in enumerate(zip(old, new, strict=True)):
-            yield from _leaves(a, b, f"{place}[{i}]")
-    elif old != new:
-        yield place, old, new
+def _compare_whole(carried, again, files, report):
+    """The file must be the one issued again: nothing printed, drawn or attached may differ."""
+    changes, remarks = _changes(carried, again, files)
+    report.remarks += [f"{carried.name}: {remark}" for remark in remarks]
+    for words in changes:
+        report.find(ALTERED, f"{carried.name}: {words}")
 
 
-def _compare_lines(path, where, found, again, report):
-    for old, new in _different_lines(found, again):
-        report.find(ALTERED, f"{path.name}, {where}: printed \"{old}\", recomputed \"{new}\"")
-
-
-def _different_lines(found, again):
-    matcher = difflib.SequenceMatcher(None, found, again, autojunk=False)
-    for tag, a, b, c, d in matcher.get_opcodes():
-        if tag != "equal":
-            yield " ".join(found[a:b])[:160], " ".join(again[c:d])[:160]
-
-
-def _compare_pdf(path, content, again, report):
-    found, new = _reader(path, content), _reader(path, again)
-    if len(found.pages) != len(new.pages):
-        report.find(ALTERED, f"{path.name}: has {len(found.pages)} pages, issued again {len(new.pages)}")
-        return
-    for number, (page, page_again) in enumerate(zip(found.pages, new.pages, strict=True), 1):
-        _compare_lines(path, f"page {number}", page.extract_text().splitlines(), page_again.extract_text().splitlines(),
-                       report)
-    attached, attached_again = _from_pdf(path, content), _from_pdf(path, again)
-    for name in sorted({*attached, *attached_again}):
-        if attached.get(name) != attached_again.get(name):
-            report.find(ALTERED, f"{path.name}: the attached {name} is not the one issued")
-    for number, (page, page_again) in enumerate(zip(found.pages, new.pages, strict=True), 1):
-        if _drawn(page) != _drawn(page_again):
-            report.find(ALTERED, f"{path.name}, page {number}: what is drawn is not what was issued (a digit in a "
-                                 "figure, a stamp over the page, or an added mark)")
-    if (found.metadata or {}) != (new.metadata or {}):
-        report.find(ALTERED, f"{path.name}: the title, date or other properties are not those issued")
-
-
-def _drawn(page):
-    """Return a digest of all that a page draws: its own content and every form and image it uses."""
-    digest, seen = hashlib.sha256(), set()
-
-    def add(thing):
-        from pypdf.generic import ArrayObject, DictionaryObject, IndirectObject, StreamObject
-        if isinstance(thing, IndirectObject):
-            if (thing.idnum, thing.generation) in seen:
-                return
-            seen.add((thing.idnum, thing.generation))
-            thing = thing.get_object()
-        if isinstance(thing, StreamObject):
-            digest.update(thing.get_data())
-        if isinstance(thing, DictionaryObject):
-            for key in sorted(thing):
-                if key not in ("/Parent", "/P", "/StructParent", "/StructParents", "/Length", "/Filter", "/DecodeParms",
-                               "/Annots", "/FontFile2", "/FontFile3"):
-                    digest.update(key.encode())
-                    add(thing.raw_get(key))
-        elif isinstance(thing, ArrayObject):
-            for each in thing:
-                add(each)
-        else:
-            digest.update(repr(thing).encode())
-
-    for key in ("/Contents", "/Resources", "/MediaBox", "/Rotate"):
-        if key in page:
-            add(page.raw_get(key))
-    return digest.hexdigest()
-
-
-def _compare_html(path, content, again, report):
-    _compare_lines(path, "page", _cut(content), _cut(again), report)
-
-
-def _cut(content):
-    return re.findall(r"[^<>\s][^<>]*|<[^>]*>", content.decode("utf-8", "replace"))
-
-
-def _compare_notebook(path, content, again, report):
-    found, new = _json(path, content), json.loads(again)
-    for i, (old, cell) in enumerate(zip(found.get("cells", []), new["cells"], strict=False), 1):
-        if "".join(old.get("source", "")) != "".join(cell["source"]):
-            report.find(ALTERED, f"{path.name}, cell {i}: its source is not that of the workbook (it was not run)")
-        a = [output.get("data", output) for output in old.get("outputs", [])]
-        b = [output.get("data", output) for output in cell.get("outputs", [])]
-        for place, was, now in _leaves(a, b):
-            report.find(ALTERED, f"{path.name}, cell {i}, output {place}: {_short(was, now)}")
-    if len(found.get("cells", [])) != len(new["cells"]):
-        report.find(ALTERED, f"{path.name}: has {len(found.get('cells', []))} cells, the workbook {len(new['cells'])}")
-
-
-def _short(was, now):
-    was, now = ("".join(x) if isinstance(x, list) else str(x) for x in (was, now))
-    start = max(0, next((i for i, (a, b) in enumerate(zip(was, now, strict=False)) if a != b), 0) - 30)
-    return f'printed "{was[start:start + 80]}", recomputed "{now[start:start + 80]}"'
-
-
-def _compare_json(path, content, again, report):
-    for place, old, new in _leaves(json.loads(content), json.loads(again)):
-        report.find(ALTERED, f"{path.name}, {place}: {old}, recomputed {new}")
-
-
-_PRINTS = {".pdf": _compare_pdf, ".html": _compare_html, ".ipynb": _compare_notebook, ".json": _compare_json}
-
-
-def _compare_prints_with_record(path, content, record, report):
-    """With another version, the prints of each limit state must still be those of the record."""
-    if path.suffix == ".json":
-        return
-    if path.suffix == ".pdf":
-        text = " ".join(page.extract_text() for page in _reader(path, content).pages)
+def _changes(carried, again, files):
+    if carried.suffix == ".pdf":
+        changes, remarks = comparing.pdf_changes(read_pdf(carried.name, carried.content),
+                                                 read_pdf(carried.name, again))
+    elif carried.suffix == ".html":
+        changes, remarks = list(comparing.html_changes(carried.content, again)), []
     else:
-        text = content.decode("utf-8", "replace")
-    plain = re.sub(r"\s+", " ", text)
-    for row in record["results"].get("limit_states", []):
-        for entry in ("nominal_strength", "available_strength", "required_strength"):
-            if row.get(entry) is not None and (printed := f"{units.significant(row[entry])} {row['unit']}") not in plain:
-                report.find(ALTERED, f"{path.name}: {row['key']}, {entry} {printed} of the record is not printed")
+        found, new = (read_json(carried.name, content) for content in (carried.content, again))
+        made = comparing.notebook_changes(found, new) if carried.suffix == ".ipynb" else (
+            (place, comparing.sides(old, new)) for place, old, new in comparing.leaves(found, new))
+        changes, remarks = [f"{place}: {words}" for place, words in made], []
+    attached = {name: content for name, content in files.items() if Path(name).suffix in _ATTACHED}
+    changed = [f"the attached {name} is not the one issued" for name in {**attached, **carried.files}
+               if carried.suffix in _WRITERS and carried.files.get(name) != attached.get(name)]
+    return [*changed, *changes], remarks
 
 
-def _compare_case_file(folder, carried, report):
-    for path in folder.glob("*.yaml"):
-        if cases.load(path).digest != carried.case.digest:
-            report.find(ALTERED, f"{path.name}: the case in the folder is not the one in the issued calc")
+def _compare_notebooks(carried, again, same_tools, status, report):
+    """Compare the notebook carried with the one issued again: its sources, and each number that a section prints."""
+    if same_tools:
+        sources, sources_again = ([(cell["id"], "".join(cell["source"])) for cell in notebook["cells"]]
+                                  for notebook in (carried.notebook, again))
+        if sources != sources_again:
+            report.find(ALTERED, f"{carried.name}: the source of the notebook is not that of the workbook (it was not "
+                                 "run)")
+    sections, sections_again = _sections(carried.notebook), _sections(again)
+    for key in {**sections_again, **sections}:
+        if key not in sections or key not in sections_again:
+            report.find(status, f"{carried.name}: the section {key} stands only in the "
+                                f"{'file' if key in sections else 'recomputed calc'}")
+            continue
+        texts, texts_again = ([text for each in group for text in _printing(each)]
+                              for group in (sections[key], sections_again[key]))
+        for old, new in comparing.changes(texts, texts_again):
+            if comparing.numbers(old) != comparing.numbers(new):
+                report.find(status, f"{carried.name}: section {key}: {comparing.sides(old, new)}")
+
+
+def _sections(notebook):
+    made = {}
+    for cell in notebook["cells"]:
+        for output in cell.get("outputs", []):
+            if bundles.SECTION in output.get("data", {}):
+                section = output["data"][bundles.SECTION]
+                made.setdefault(section["key"], []).append(section)
+    return made
+
+
+# Sections whose words belong to a version: what they say is not a result.
+_WORDS = ("scope", "assumptions", "cautions", "checker")
+
+
+def _printing(section):
+    """Return the texts of a section that print results, in order; a drawing is told by its words."""
+    if section["key"] in _WORDS:
+        return []
+    return [text for node in section["nodes"] for text in _texts(
+        {name: value for name, value in node.items() if name not in ("svg", "png", "width")})]
+
+
+def _texts(value):
+    if isinstance(value, dict):
+        return [text for each in value.values() for text in _texts(each)]
+    if isinstance(value, list):
+        return [text for each in value for text in _texts(each)]
+    return [str(value)] if value not in (None, "") else []
+
+
+def _compare_with_itself(carried, report):
+    """Compare what a notebook stores twice: case and record, and each section in its public and its private form."""
+    stored = next(output["data"][bundles.CALC] for cell in carried.notebook["cells"]
+                  for output in cell.get("outputs", []) if bundles.CALC in output.get("data", {}))
+    if stored["record"] != carried.record or cases.parse(stored["case"]).yaml() != carried.case.yaml():
+        report.find(ALTERED, f"{carried.name}: its notebook holds another case or record than it carries")
+    head = stored["document"]
+    told = {"digest": carried.case.digest, "version": f"calclib {carried.record['calclib']}",
+            "verdict": carried.record["verdict"]}
+    for name, value in told.items():
+        if head[name] != value:
+            report.find(ALTERED, f"{carried.name}: {name}: {comparing.sides(head[name], value)}")
+    if carried.record["calclib"] != _made_with(carried).get("calclib"):
+        report.find(ALTERED, f"{carried.name}: the notebook says calclib {_made_with(carried).get('calclib')}, the "
+                             f"record {carried.record['calclib']}")
+    for number, cell in enumerate(carried.notebook["cells"], 1):
+        data = [output["data"] for output in cell.get("outputs", []) if "data" in output]
+        sections = [each[bundles.SECTION] for each in data if bundles.SECTION in each]
+        if sections:
+            again = [output.data for section in sections for output in bundles.outputs(_with_pictures(section))]
+            for words in _public_changes(data, again):
+                report.find(ALTERED, f"{carried.name}: cell {number}, {words}")
+
+
+def _with_pictures(section):
+    """Return a section as it was shown; the picture is stored beside it."""
+    return {**section, "nodes": [{"png": "", **node} if node["type"] == "figure" else node
+                                 for node in section["nodes"]]}
+
+
+def _public_changes(found, again):
+    """Yield where the texts that any viewer shows print other numbers than the section stored beside them."""
+    if len(found) != len(again):
+        yield f"has {len(found)} outputs, its sections make {len(again)}"
+    for data, made in zip(found, again, strict=False):
+        for mime in ("text/latex", "text/markdown", "text/plain"):
+            old, new = ("".join(each.get(mime, "")) for each in (data, made))
+            # Another version may make another stamp; it is no result.
+            old, new = (re.sub(r"\bstamp [0-9a-f]{8}\b", "", each) for each in (old, new))
+            if comparing.numbers(old) != comparing.numbers(new):
+                yield f"{mime}: {comparing.sides(old, new)}"
+
+
+def _write(suffix):
+    from calclib.issuing.html import write_html
+    from calclib.issuing.pdf import write_pdf
+    return write_pdf if suffix == ".pdf" else lambda *arguments: write_html(*arguments).encode()
+
+
+def _compare_with_carried(carried, same_tools, report):
+    """Lay out once more what the notebook in the file says, and compare: with the same versions all, else numbers."""
+    from calclib.issuing import pages
+    # Only what the calc says is laid out: no other cell or output of a stranger.
+    cells = [{**cell, "outputs": [output for output in cell.get("outputs", [])
+                                  if {bundles.SECTION, bundles.CALC} & set(output.get("data", {}))]}
+             for cell in carried.notebook["cells"] if cell["cell_type"] == "code"]
+    document, _, _ = pages.document_of({"cells": json.loads(json.dumps(cells))})
+    files = {name: content for suffix in _ATTACHED for name, content in carried.files.items() if name.endswith(suffix)}
+    for name in set(carried.files) - set(files):
+        report.find(ALTERED, f"{carried.name}: the attached {name} is not part of the issue")
+    again = _write(carried.suffix)(document, pages.attachments(files))
+    if same_tools:
+        _compare_whole(carried, again, carried.files, report)
+        return
+    if carried.suffix == ".pdf":
+        reader = read_pdf(carried.name, carried.content)
+        for words in comparing.marks_on(reader):
+            report.find(ALTERED, f"{carried.name}: {words}")
+        found, new = (comparing.pdf_numbers(each) for each in (reader, read_pdf(carried.name, again)))
+    else:
+        found, new = comparing.html_numbers(carried.content), comparing.html_numbers(again)
+    for old, now in comparing.changes(found, new):
+        report.find(ALTERED, f"{carried.name}: the numbers printed are not those of the notebook it carries: "
+                             f"{comparing.sides(old, now)}")
+
+
+def _compare_case_file(path, expected, first, report):
+    try:
+        case = cases.load(path)
+    except CalcError as error:
+        report.find(ALTERED, str(error))
+        return
+    if case.yaml() != first.case.yaml():
+        report.find(ALTERED, f"{path.name}: the case in the folder is not the one in the issued calc")
+    elif expected and path.read_bytes() != _of(expected, ".yaml"):
+        report.remarks.append(f"{path.name}: written otherwise than issued; the inputs are the same")

@@ -5,6 +5,7 @@ import os
 import shutil
 import sys
 import tempfile
+from importlib.metadata import version
 from pathlib import Path
 
 from jupyter_client.manager import AsyncKernelManager
@@ -21,6 +22,12 @@ _PRELOAD = ["--IPKernelApp.exec_lines=import calclib.workbook, calclib.typeset, 
 # The running kernel is emptied and moved to the folder of the calc before each workbook.
 _CLEAN = "get_ipython().reset(new_session=True)\nimport os as _os\n_os.environ['CALCLIB_BATCH'] = '1'\n_os.chdir({!r})"
 
+# What decides the bytes of an issued calc beside calclib itself; .ci/versions.txt pins the same for the demo calcs.
+_DECIDES = ("contourpy", "fonttools", "handcalcs", "matplotlib", "numpy", "pillow", "pint", "pypandoc_binary", "typst")
+
+LEFT_BY_SYSTEMS = {".DS_Store", "Thumbs.db", "desktop.ini"}   # what a file browser leaves in a folder
+_SWEPT = ".swept"
+
 QUIET = ["--log-level=ERROR"]  # the kernel otherwise warns of plain TCP, which never leaves this machine here
 
 
@@ -34,6 +41,20 @@ def workbook_of(kind):
     raise CalcError(f"no workbook {kind.name}.ipynb beside calclib; reinstall calclib.")
 
 
+def made_with():
+    """Return the versions that decide the bytes of an issued calc: name -> version."""
+    return {"calclib": calclib.__version__, **{name: version(name) for name in _DECIDES}}
+
+
+def _environment(home):
+    """Return the environment of the kernel: the same calclib as here, and nothing of this user's settings."""
+    kept = {name: value for name, value in os.environ.items()
+            if name not in ("PYTHONSTARTUP", "MATPLOTLIBRC", "JPY_SESSION_NAME")}
+    package = str(Path(calclib.__file__).parent.parent)
+    return {**kept, "IPYTHONDIR": home, "CALCLIB_BATCH": "1",
+            "PYTHONPATH": os.pathsep.join(filter(None, (package, os.environ.get("PYTHONPATH"))))}
+
+
 class Issuer:
     """Issues calcs; the kernel is started for the first and serves the others of the same run.
 
@@ -41,7 +62,7 @@ class Issuer:
     """
 
     def __init__(self):
-        self._kernel = self._client = None
+        self._kernel = self._client = self._home = None
 
     def __enter__(self):
         return self
@@ -51,12 +72,20 @@ class Issuer:
             self._client.kc.stop_channels()
         if self._kernel is not None:
             run_sync(self._kernel.shutdown_kernel)(now=True)
+        if self._home is not None:
+            self._home.cleanup()
 
     def _start(self):
-        """Start the kernel. It gets going by itself while this process imports what it needs, which takes as long."""
+        """Start the kernel. It gets going by itself while this process imports what it needs, which takes as long.
+
+        It gets an empty folder, since Python imports from the folder that it is in, and whoever checks a calc stands in
+        a folder of a stranger's files; and no start-up file of this user, which could change what the workbook prints.
+        """
         if self._kernel is None:
+            self._home = tempfile.TemporaryDirectory(prefix="calc-kernel-", ignore_cleanup_errors=True)
             self._kernel = AsyncKernelManager(kernel_name="python3")
-            run_sync(self._kernel.start_kernel)(extra_arguments=[*QUIET, *_PRELOAD])
+            run_sync(self._kernel.start_kernel)(extra_arguments=[*QUIET, *_PRELOAD], cwd=self._home.name,
+                                                env=_environment(self._home.name))
 
     def build(self, case):
         """Return {file name: bytes} of an issued calc: PDF, HTML, executed notebook, record, case."""
@@ -89,16 +118,21 @@ class Issuer:
 
         Raises
         ------
-        CalcError : the case has no number, or the revision is issued already with other content.
+        CalcError : the case cannot be used, the revision is issued already with other content, or nothing can be
+            written.
         """
         case = cases.load(case_path)
         files = self.build(case)
         calc = evaluate(case)
         folder = Path(to) / calc.x.calc_number / f"rev-{calc.x.revision}"
-        if folder.exists():
-            _refuse_if_different(folder, files)
-        else:
-            _write_folder(folder, files)
+        try:
+            _sweep(folder)
+            if folder.exists():
+                _refuse_if_different(folder, files)
+            else:
+                _write_folder(folder, files)
+        except OSError as error:
+            raise CalcError(f"{folder}: cannot be written: {error.strerror or error}. Nothing was issued.") from error
         order = (".pdf", ".html", ".ipynb", ".json", ".yaml")
         return [folder / name for name in sorted(files, key=lambda n: order.index(Path(n).suffix))]
 
@@ -112,17 +146,26 @@ class Issuer:
             self._execute(notebook)
             self._execute(nbformat.v4.new_notebook(cells=[nbformat.v4.new_code_cell(
                 _CLEAN.format(tempfile.gettempdir()))]))  # Windows removes no folder that a process is in
-        return _as_issued(notebook)
+        notebook = _as_issued(notebook)
+        notebook.metadata["calclib"] = made_with()
+        return notebook
 
     def _execute(self, notebook):
         from nbclient import NotebookClient
+        from nbclient.exceptions import CellExecutionError, CellTimeoutError, DeadKernelError
         if self._client is None:
             self._client = NotebookClient(notebook, km=self._kernel, record_timing=False, timeout=120)
         self._client.nb = notebook
         self._client.reset_execution_trackers()
         with self._client.setup_kernel(cleanup_kc=False):
             for index, cell in enumerate(notebook.cells):
-                self._client.execute_cell(cell, index)
+                try:
+                    self._client.execute_cell(cell, index)
+                except CellExecutionError as error:
+                    raise CalcError(f"the workbook stopped in cell {index + 1} with {error.ename}: {error.evalue}. "
+                                    "Nothing was issued.") from error
+                except (CellTimeoutError, DeadKernelError) as error:
+                    raise CalcError(f"the workbook gave no answer in cell {index + 1}. Nothing was issued.") from error
 
 
 def _import_nbformat():
@@ -165,15 +208,35 @@ def _as_issued(notebook):
 
 
 def _refuse_if_different(folder, files):
-    present = {path.name: path.read_bytes() for path in folder.iterdir()}
+    present = {path.name: path.read_bytes() if path.is_file() else None for path in folder.iterdir()
+               if path.name not in LEFT_BY_SYSTEMS}
     if present != files:
         raise CalcError(f"{folder}: this revision is issued already, with other content. An issued revision is never "
                         "overwritten: raise the revision in the case, or issue to another folder.")
 
 
+def _staging(folder):
+    """Return how the name of a folder begins that is being written."""
+    return f".{folder.name}-"
+
+
+def _sweep(folder):
+    """Remove what a killed process left beside `folder`.
+
+    Each is renamed first: a process that is still writing there then fails as a whole, and never puts a folder in place
+    that is half swept.
+    """
+    if folder.parent.is_dir():
+        for left in [path for path in folder.parent.iterdir() if path.name.startswith(_staging(folder))]:
+            swept = left.with_name(f"{_SWEPT}{left.name}")
+            os.rename(left, swept)
+        for swept in [path for path in folder.parent.iterdir() if path.name.startswith(_SWEPT)]:
+            shutil.rmtree(swept)
+
+
 def _write_folder(folder, files):
     folder.parent.mkdir(parents=True, exist_ok=True)
-    staging = Path(tempfile.mkdtemp(prefix=f".{folder.name}-", dir=folder.parent))
+    staging = Path(tempfile.mkdtemp(prefix=_staging(folder), dir=folder.parent))
     try:
         for name, content in files.items():
             cases.write_whole(staging / name, content)
