@@ -164,7 +164,8 @@ def detailing(calc):
 
 def sensitivity(calc, vectors=True):
     from calclib.explore import sensitivity as explore
-    made = [explore.Sensitivity(calc, plot) for plot in calc.case.kind.plots]
+    made = [explore.Sensitivity(calc, plot) for plot in calc.case.kind.plots
+            if plot.applies is None or plot.applies(calc.x)]
     return [_section("sensitivity", "Sensitivity", [
         _figure(each.figure, each.alt, each.caption, vectors) for each in made])]
 

@@ -6,6 +6,8 @@ from calclib import units
 from calclib.calc import sweep
 from calclib.explore.figures import sensitivity_figure, series_figure
 
+MOST = 6     # curves with names beside them that can be told apart in one figure
+
 
 class Sensitivity:
     """One sensitivity plot of a calc: its words at once, its figure when asked for."""
@@ -20,6 +22,11 @@ class Sensitivity:
                 "is. The required strength and the present value are marked.")
         other = [b.title for b in self.calc.limit_states
                  if b.available is not None and b.required != self.calc.run.required]
+        several = [b for b in self.calc.limit_states
+                   if b.available is not None and not b.advisory and b.required == self.calc.run.required]
+        if len(several) > MOST and not self.plot.discrete:
+            text += (" Drawn are the limit states that govern somewhere in the range, and those next above at the "
+                     "present value; the others govern nowhere in it.")
         return text + (f" Not drawn, since compared with another load: {', '.join(other)}." if other else "")
 
     @property
@@ -44,15 +51,28 @@ class Sensitivity:
             "x_format": {units.US: "inch", units.SI: "mm"}[x.units] if field.dimension is units.LENGTH else None,
             "y_label": f"Available strength ({unit})",
         }
-        label = f"{field.label} ({field.dimension.printed[x.units][0]})"
+        printed = field.dimension.printed[x.units][0]
+        label = f"{field.label} ({printed})" if printed else field.label
         governing = [curve for curve in curves if not curve.advisory]
         if plot.discrete:
             at = list(axis).index(present)
             least = min(governing, key=lambda curve: curve.available[at])
             return series_figure(label, {_name(c): (axis, c.available * factor) for c in curves},
                                  present=(_name(least), present), **words)
-        return sensitivity_figure(label, axis, {_name(c): c.available * factor for c in governing}, present=present,
+        drawn = _lowest(governing, axis, present)
+        return sensitivity_figure(label, axis, {_name(c): c.available * factor for c in drawn}, present=present,
                                   beside={_name(c): c.available * factor for c in curves if c.advisory}, **words)
+
+
+def _lowest(curves, axis, present):
+    """Return the curves to draw, in their order: all that are lowest somewhere, then the lowest at the present value
+    up to MOST."""
+    strengths = np.array([curve.available for curve in curves])
+    known = strengths[:, ~np.isnan(strengths).all(axis=0)]
+    lowest = set(np.nanargmin(known, axis=0)) if known.size else set()
+    at_present = np.argsort(strengths[:, list(axis).index(present)], kind="stable")
+    rest = [i for i in at_present if i not in lowest][:max(MOST - len(lowest), 0)]
+    return [curve for i, curve in enumerate(curves) if i in lowest or i in rest]
 
 
 def _name(curve):

@@ -121,13 +121,14 @@ class Kind:
 
 @dataclass(frozen=True)
 class Plot:
-    """A sensitivity plot that every calc of a kind carries."""
+    """A sensitivity plot that every calc of a kind carries, where it applies."""
 
     field: str                    # the input along the axis
     points: object                # (x) -> {input: array}: where to evaluate; the first is the axis
     present: object = None        # (x) -> present value, where the input itself may be blank
     sizes: object = None          # (x) -> [(value, text)]: standard sizes to mark along the axis
     discrete: bool = False        # only the points exist, such as the sizes of a series
+    applies: object = None        # (x) -> whether the case has the input, where it may be blank
 
 
 def multiples(name, low, high, count=200):

@@ -17,7 +17,9 @@ CENTROID = ("the examples take the distance from a table of tees or angles; agai
             "tests/honest/test_connections.py")
 NO_EXAMPLE = "no published example was found; hand arithmetic and limits in tests/honest/test_connections.py"
 DETAILING = "a detailing rule that no example prints; tests/honest/test_connections.py"
+BUILT_UP = "no published example was found; by hand in tests/honest/test_built_up.py"
 FATIGUE = "no published example was found; powers by logarithms in tests/honest/test_fatigue.py"
+WELDED = "no published example was found; by hand in tests/honest/test_welded_traps.py"
 PRODUCT = "product of a factor that is checked; tests/honest/test_hole_in_strip.py"
 UNPUBLISHED = {
     "ratio": "no example prints the ratio; a quotient, recomputed by the pocket-calculator test",
@@ -64,7 +66,19 @@ UNPUBLISHED = {
     "strength_of_mixed_fillets": NO_EXAMPLE,
     "effective_length_of_very_long_fillet": NO_EXAMPLE,
     "size_of_short_fillet": NO_EXAMPLE,
+    "area_of_equal_welds": WELDED,
+    "sum_of_mixed_fillets": WELDED,
+    "clear_depth_of_web": WELDED,
+    "radius_of_gyration_of_plate": WELDED,
     "gross_area_of_parts": NO_EXAMPLE,
+    "holes_in_all_parts": BUILT_UP,
+    "offset_toe_to_toe": BUILT_UP,
+    "offset_of_cover_plate": BUILT_UP,
+    "radius_of_gyration_with_cover_plates": BUILT_UP,
+    "radius_of_gyration_of_rectangle": BUILT_UP,
+    "radius_of_gyration_of_stack": BUILT_UP,
+    "radius_of_gyration_of_perforated_plate": BUILT_UP,
+    "thinner_of_two_parts": BUILT_UP,
     "least_spacing": DETAILING,
     "preferred_spacing": DETAILING,
     "least_edge_distance_of_large_bolts": DETAILING,
