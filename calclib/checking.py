@@ -182,12 +182,16 @@ def _made_with(carried):
         return dict(carried.notebook["metadata"]["calclib"])
 
 
+_NOT_COMPUTED = r"(format|digest|inputs|revisions)\b"    # what a record repeats from the case
+
+
 def _compare_records(carried, again, report):
     """Report each number of the record that is computed otherwise, and return whether there is any."""
     found = [(place, old, new) for place, old, new in comparing.leaves(_by_key(carried.record), _by_key(again))
              if place != "calclib"]
     for place, old, new in found:
-        report.find(DIFFERS, f"{carried.name}: {_named(place, again)}: record {_brief(old)}, recomputed {_brief(new)}"
+        status = ALTERED if re.match(_NOT_COMPUTED, place) else DIFFERS
+        report.find(status, f"{carried.name}: {_named(place, again)}: record {_brief(old)}, recomputed {_brief(new)}"
                     + _by(old, new))
     return bool(found)
 

@@ -8,6 +8,7 @@ import difflib
 import json
 import re
 from collections import Counter
+from xml.etree import ElementTree
 
 from calclib.carried import Page
 
@@ -66,10 +67,12 @@ def numbers(text):
 def notebook_changes(found, again):
     """Yield (place, words) of every leaf of two notebooks that differs, a text stored in lines read as one text."""
     found, again = _with_whole_texts(found), _with_whole_texts(again)
-    if len(found["cells"]) != len(again["cells"]):
-        yield "cells", f"has {len(found['cells'])} cells, issued again {len(again['cells'])}"
-    for number, (cell, cell_again) in enumerate(zip(found["cells"], again["cells"], strict=False), 1):
-        for place, old, new in leaves(cell, cell_again):
+    names, names_again = ([str(cell.get("id")) for cell in notebook["cells"]] for notebook in (found, again))
+    for old, new in changes(names, names_again):
+        yield "cells", sides(old, new)
+    cells = dict(zip(names, found["cells"], strict=True))
+    for number, (name, cell_again) in enumerate(zip(names_again, again["cells"], strict=True), 1):
+        for place, old, new in leaves(cells.get(name, cell_again), cell_again):
             code = ": its source is not that of the workbook (it was not run)" if place == "source" else ""
             yield f"cell {number}, {place}{code}", sides(old, new)
     for place, old, new in leaves({**found, "cells": 0}, {**again, "cells": 0}):
@@ -110,11 +113,12 @@ def html_numbers(content):
 
 # --- PDF -------------------------------------------------------------------------------------------------------
 
-_LATER = ("/Producer", "/ModDate")                     # what a program says of itself when it saves or signs a file
+# What a program says of itself when it saves or signs a file.
+_LATER = ("/Producer", "/ModDate", "Producer", "ModifyDate", "MetadataDate")
 _FOR_SIGNATURES = ("/AcroForm", "/Perms", "/DSS", "/Extensions")
 _OF_STREAMS = ("/Length", "/Filter", "/DecodeParms")
 _PLACES = {"/StructTreeRoot": "the words for screen readers", "/Outlines": "the bookmarks", "/Names": "attached files",
-           "/AF": "attached files", "/Metadata": "the properties (XMP)"}
+           "/AF": "attached files"}
 
 
 def pdf_changes(found, again):
@@ -139,15 +143,13 @@ def pdf_changes(found, again):
         remarks.append("a signature was added that shows on no page; whether it is valid is not checked here")
     elif added:
         made["fields or actions were added"] = None
-    for place, old, new in _walk(root, root_again, seen, ("/Pages", *added)):
+    for place, old, new in _walk(root, root_again, seen, ("/Pages", "/Metadata", *added)):
         made.setdefault(f"{_PLACES.get(place[0], place[0])}: not as issued{_strings(old, new)}", None)
-    info, info_again = found.metadata or {}, again.metadata or {}
-    for key in {**info_again, **info}:
-        if info.get(key) != info_again.get(key):
-            if key in _LATER:
-                remarks.append("another program saved or signed it")
-            else:
-                made[f"the property {key[1:]}: {sides(str(info.get(key)), str(info_again.get(key)))}"] = None
+    for name, old, new in _property_changes(found, again):
+        if name in _LATER:
+            remarks.append("another program saved or signed it")
+        else:
+            made[f"the property {name.lstrip('/')}: {sides(old, new)}"] = None
     return [*_printed(made, found, again), *made], list(dict.fromkeys(remarks))
 
 
@@ -175,6 +177,28 @@ def _walk(found, again, seen, left_out):
             waiting += [(place, a, b) for a, b in zip(list.__iter__(old), list.__iter__(new), strict=True)]
         elif old != new or isinstance(old, dict) != isinstance(new, dict):
             yield place or ("/",), old, new
+
+
+def _property_changes(found, again):
+    """Yield (name, found, again) of the properties that differ, those in XMP whatever the layout of its XML."""
+    info, info_again = ({key: str(value) for key, value in (reader.metadata or {}).items()} for reader in (found, again))
+    for key in {**info_again, **info}:
+        if info.get(key) != info_again.get(key):
+            yield key, info.get(key), info_again.get(key)
+    xmp, xmp_again = (_xmp(reader) for reader in (found, again))
+    if [each for each in xmp if each[0] not in _LATER] != [each for each in xmp_again if each[0] not in _LATER]:
+        yield "XMP", *(" ".join(text for each in entries for text in each if text) for entries in (xmp, xmp_again))
+    elif xmp != xmp_again:
+        yield "ModifyDate", "", ""
+
+
+def _xmp(reader):
+    stream = reader.trailer["/Root"].get("/Metadata")
+    if stream is None:
+        return []
+    return [(element.tag.rpartition("}")[2], (element.text or "").strip(), (element.tail or "").strip(),
+             *(text for pair in sorted(element.items()) for text in pair))
+            for element in ElementTree.fromstring(stream.get_object().get_data()).iter()]
 
 
 def _strings(old, new):
