@@ -58,7 +58,7 @@ def _compared(run, ranked, F_y, F_u, U_bs, count):
     others = "; ".join(f"{path.name} {units.text(nominal(path, F_y, F_u, U_bs, count), units.FORCE, run.units)}"
                        for path in ranked[1:6])
     more = f"; and {len(ranked) - 6} stronger ones" if len(ranked) > 6 else ""
-    return f"Governing path: {ranked[0].name}." + (f" Nominal strength of the other paths: {others}{more}." if others else
+    return f"Governing path: {ranked[0].name}." + (f" Nominal strength of the others: {others}{more}." if others else
                                          " There is no other path.")
 
 

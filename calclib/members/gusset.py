@@ -6,8 +6,7 @@ from calclib import units
 from calclib.equations.aisc360 import RUPTURE, YIELDING, connecting, members
 from calclib.errors import CalcError, EntryError
 from calclib.members.fields import Field
-from calclib.members.net_section import net_area
-from calclib.paths import chains
+from calclib.members.net_section import chains_of, net_area
 
 SPREAD_30, SPREAD_45 = "30 degrees", "45 degrees"
 BY_EDITION, LIMITED, NOT_LIMITED = "by the edition", "0.85 of gross", "net area as it is"
@@ -111,9 +110,9 @@ def _net_area(x, run, part, w_e, reach, t, A_g, holes):
         return part.given("A_{e}", units.AREA, A_g, run.cite("J4.1(b)"),
                           "Gross area: there are no holes in the section.")
     low = min(hole.y for hole in holes) - reach
-    moved = [replace(hole, y=hole.y - low, thickness=t) for hole in holes]
+    moved = tuple(replace(hole, y=hole.y - low, thickness=t) for hole in holes)
     try:
-        found = chains(w_e, moved, k=3, gross_area=A_g)
+        found = chains_of(w_e, moved, A_g, 1 if run.silent else 3)
     except CalcError as error:
         raise EntryError("gusset_width", f"the net section of the gusset over its width of spread fails: {error}"
                          ) from error

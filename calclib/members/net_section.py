@@ -1,7 +1,18 @@
 """Writes out the net area of a chain of holes, step by step, and names the chains that come next."""
 
+from functools import lru_cache
+
 from calclib import units
 from calclib.equations.aisc360 import members
+from calclib.paths import chains
+
+LISTED = 4      # chains that a calc names
+
+
+@lru_cache(512)      # a sweep of what is not geometry asks for the same chains again and again
+def chains_of(width, holes, gross_area, listed=LISTED):
+    """Return the governing chains of `holes`, a tuple of `Hole`, as `calclib.paths.chains` does."""
+    return tuple(chains(width, list(holes), listed, gross_area))
 
 
 def net_area(part, A_g, found, holes, t, count=1):
@@ -45,8 +56,9 @@ def _compared(run, found):
 
     def words(chain):
         share = "" if not chain.shed else f", {units.trimmed(chain.share)} of the load"
+        angled = len(chain.stagger)
         return (f"{len(chain.holes)} holes" if len(chain.holes) != 1 else "1 hole") + (
-            f", {len(chain.stagger)} gage spaces at an angle" if chain.stagger else "") + share
+            f", {angled} gage space{'s' if angled > 1 else ''} at an angle" if angled else "") + share
 
     def width(chain):
         return units.text(chain.net_width, units.LENGTH, run.units)
