@@ -27,6 +27,9 @@ class Output:
         return {} if SECTION in self.data or CALC in self.data else {"calclib": "twin"}
 
 
+BLANK = Output({"text/markdown": "", "text/plain": ""}, "")  # keeps the place of an output that other inputs will need
+
+
 def outputs(section, drawn_from=""):
     """Return the Outputs of one section.
 
@@ -37,16 +40,15 @@ def outputs(section, drawn_from=""):
     """
     figures = [node for node in section["nodes"] if node["type"] == "figure"]
     rest = [node for node in section["nodes"] if node["type"] != "figure"]
-    made = []
-    if any(node["type"] == "equation" for node in rest):
-        made.append(_words(f"### {markdown_words(section['title'])}", section["title"], ""))
-        stamp = _stamp(rest)
-        made.append(_output(section, rest, stamp, {"text/latex": latex(rest, stamp),
-                                                   "text/plain": plain_text(section["title"], rest)}))
+    made, stamp, title = [], _stamp(rest), section["title"]
+    if section["key"].startswith("strength:"):  # two outputs whether it applies or not, so that each keeps its place
+        made.append(_words(f"### {markdown_words(title)}", title, ""))
+        public = {"text/latex": latex(rest, stamp)} if any(node["type"] == "equation" for node in rest) else \
+            {"text/markdown": markdown("", rest, stamp)}
+        made.append(_output(section, rest, stamp, {**public, "text/plain": plain_text(title, rest)}))
     elif rest:
-        stamp = _stamp(rest)
-        made.append(_output(section, rest, stamp, {"text/markdown": markdown(section["title"], rest, stamp),
-                                                   "text/plain": plain_text(section["title"], rest)}))
+        made.append(_output(section, rest, stamp, {"text/markdown": markdown(title, rest, stamp),
+                                                   "text/plain": plain_text(title, rest)}))
     for node in figures:
         stamp = _stamp([drawn_from, node["caption"]])
         made.append(_output(section, [node], stamp, {"image/png": node["png"], "text/plain": node["alt"]}))
@@ -87,8 +89,7 @@ def latex_words(text):
     '\\text{a }\\$\\text{x}\\$\\text{ }\\backslash \\text{b}'
     """
     parts = re.split(r"([\\{}$^~])", text)
-    return "".join(_LATEX_SPECIAL[p] if p in _LATEX_SPECIAL else r"\text{%s}" % re.sub(r"([%#&_])", r"\\\1", p)
-                   for p in parts if p)
+    return "".join(_LATEX_SPECIAL.get(p) or "\\text{" + re.sub(r"([%#&_])", r"\\\1", p) + "}" for p in parts if p)
 
 
 def latex(nodes, stamp):
@@ -132,7 +133,7 @@ def markdown_words(text):
 
 
 def markdown(title, nodes, stamp):
-    parts = [f"### {markdown_words(title)}"]
+    parts = [f"### {markdown_words(title)}"] if title else []
     for node in nodes:
         parts.append(_MARKDOWN[node["type"]](node))
     parts.append(_printed(stamp))

@@ -10,6 +10,7 @@ const SILENCE = 2000; // ms without an answer before the kernel counts as silent
 const LONGEST_JOB = 120000; // ms for the work of a button, once the kernel has said that it is at it
 const SLOWEST_RETRY = 30000; // ms between questions to a silent kernel
 const SETTLE = 1500; // ms by which an output may trail the answer before it counts as stale
+const ARRIVAL = 2000; // ms after the last cell during which the notebook may still scroll to it
 const LISTED = 50; // options of a searched list drawn at once
 const STAMPS = /stamp\s+([0-9a-f]{8,})/gi; // no end mark: the next block's text may follow without a space
 const DEAD = "No answer from the kernel: figures below may be stale; run the workbook again.";
@@ -25,7 +26,7 @@ function make(tag, attributes = {}, ...children) {
 }
 
 /** Sends one message at a time. Edits made while one is out are merged into the next; the latest text wins. */
-function openLine(model, report) {
+function openLine(model, inView, report) {
   const view = Math.random().toString(36).slice(2);
   const typed = new Map(); // name -> text that has to go out
   const late = new Map(); // id -> edits of messages given up on; the answer may come yet
@@ -35,7 +36,7 @@ function openLine(model, report) {
     waiting = { id: `${view}.${++count}`, edits };
     timer = setTimeout(giveUp, pause);
     try {
-      model.send({ id: waiting.id, edits: [...edits], press });
+      model.send({ id: waiting.id, edits: [...edits], press, in_view: inView() });
     } catch (error) { // a closed comm throws: the same silence, known at once; the timer asks again
       setSilent(true);
     }
@@ -88,8 +89,18 @@ function openLine(model, report) {
 /** Compares the stamp printed in each output of the notebook with the judge's, and marks the outputs that differ.
     An output that an edit does not touch keeps its stamp, so the judge vouches for several. */
 function watchOutputs(el, current, report) {
-  const since = new WeakMap();
+  const since = new WeakMap(), visible = new Set(), observed = new WeakSet();
+  const sight = new IntersectionObserver((entries) => {
+    for (const entry of entries) entry.isIntersecting ? visible.add(entry.target) : visible.delete(entry.target);
+  });
   let timer = 0, observer = null, notebook = null;
+
+  function stampsOf(output) {
+    // A typeset formula holds no stamp, and its text is long.
+    const parts = [...output.querySelectorAll(".jp-OutputArea-output")].map((part) => [...part.childNodes]
+      .map((node) => (node.nodeName === "MJX-CONTAINER" ? " " : node.textContent)).join(""));
+    return [...parts.join(" ").matchAll(STAMPS)].map((match) => match[1].toLowerCase());
+  }
 
   function check() {
     clearTimeout(timer);
@@ -97,15 +108,17 @@ function watchOutputs(el, current, report) {
     if (!notebook) {
       notebook = el.closest(".jp-Notebook");
       if (!notebook) return;
-      observer = new MutationObserver(() => { timer ||= setTimeout(check, 100); });
+      observer = new MutationObserver((changes) => {
+        if (!changes.every((change) => el.contains(change.target))) timer ||= setTimeout(check, 100);
+      });
       observer.observe(notebook, { childList: true, characterData: true, subtree: true });
     }
     const { stamp, silent } = current();
     const valid = stamp ? stamp.split(" ") : [];
     let anyStale = false, settling = false;
     for (const output of notebook.querySelectorAll(".jp-Cell-outputWrapper")) {
-      const stamps = output.contains(el) ? [] : [...output.textContent.matchAll(STAMPS)].map((match) => match[1]);
-      const differs = stamps.some((found) => !valid.some((each) => found.toLowerCase().startsWith(each)));
+      const stamps = output.contains(el) ? [] : stampsOf(output);
+      const differs = stamps.some((found) => !valid.some((each) => found.startsWith(each)));
       if (!differs) since.delete(output);
       else if (!since.has(output)) since.set(output, Date.now());
       const stale = stamps.length > 0 && (silent || (differs && Date.now() - since.get(output) >= SETTLE));
@@ -113,6 +126,10 @@ function watchOutputs(el, current, report) {
       anyStale ||= stale;
       output.classList.toggle("calc-live", stamps.length > 0);
       output.classList.toggle("calc-stale-output", stale);
+      for (const part of stamps.length ? output.querySelectorAll(".jp-OutputArea-child") : []) {
+        if (!observed.has(part)) sight.observe(part);
+        observed.add(part);
+      }
     }
     if (settling) timer = setTimeout(check, SETTLE);
     notebook.classList.toggle("calc-stale", anyStale);
@@ -120,8 +137,10 @@ function watchOutputs(el, current, report) {
   }
   return {
     check,
+    inView() { return [...visible].filter((part) => part.isConnected).flatMap(stampsOf); },
     close() {
       observer?.disconnect();
+      sight.disconnect();
       clearTimeout(timer);
       // A form that is gone vouches for nothing. Running its cell again puts a new one there, which looks for itself.
       const left = notebook;
@@ -201,7 +220,7 @@ function addSearch(input, names, label) {
 }
 
 function drawSymbol(symbol) {
-  const [main, ...below] = symbol.split("_");
+  const [main, ...below] = symbol.replace(/[{}]/g, "").split("_");
   return make("var", {}, main, ...(below.length ? [make("sub", {}, below.join(","))] : []));
 }
 
@@ -211,21 +230,28 @@ function drawField(spec, id) {
   const control = make(listed ? "select" : "input", {
     id, class: "calc-control", "data-lm-suppress-shortcuts": "true", autocomplete: "off", spellcheck: "false",
     "aria-describedby": `${id}-unit ${id}-echo ${id}-message ${id}-help`, "aria-required": spec.optional ? "" : "true",
-    ...(listed ? {} : { type: "text", autocapitalize: "off", placeholder: spec.example && `e.g. ${spec.example}` }),
+    ...(listed ? {} : { type: "text", autocapitalize: "off" }),
   });
-  if (listed && spec.optional && !spec.choices.includes("")) control.append(new Option("(none)", ""));
+  const blank = listed && spec.optional && !spec.choices.includes("") ? new Option("", "") : null;
+  if (blank) control.append(blank);
   if (listed) for (const choice of spec.choices) control.append(new Option(choice, choice));
   const label = make("label", { for: id }, spec.label);
   if (spec.symbol) label.append(" ", drawSymbol(spec.symbol));
   if (spec.optional) label.append(" ", make("span", { class: "calc-optional" }, "optional"));
-  const unit = make("span", { class: "calc-unit", id: `${id}-unit` }, spec.unit || "");
+  const unit = make("span", { class: "calc-unit", id: `${id}-unit` });
   const echo = make("span", { class: "calc-echo", id: `${id}-echo` });
   const message = make("div", { class: "calc-message", id: `${id}-message` });
   const help = make("div", { class: "calc-help", id: `${id}-help` }, spec.help || "");
   const entry = make("div", { class: spec.unit ? "calc-entry calc-measured" : "calc-entry" }, control, unit, echo);
   const box = make("div", { class: "calc-field" }, label, entry, make("div", { class: "calc-below" }, message, help));
+  function describe({ unit: hint, blank: meaning, example }) {
+    unit.textContent = hint || "";
+    if (blank) blank.text = meaning || "(none)";
+    if (!listed) control.placeholder = meaning || (example ? `e.g. ${example}` : "");
+  }
+  describe(spec);
   return {
-    name: spec.name, label: spec.label, box, control, committed: "",
+    name: spec.name, label: spec.label, box, control, committed: "", describe,
     search: spec.search ? addSearch(control, spec.choices, spec.label) : null,
     write(text) {
       // A text that is not among the choices is shown as it is, so that nothing is chosen behind the engineer's back.
@@ -236,13 +262,38 @@ function drawField(spec, id) {
     },
     show(reply) {
       const wrong = reply.messages[spec.name];
-      message.textContent = wrong || "";
-      control.setAttribute("aria-invalid", wrong ? "true" : "false");
-      const read = reply.echo[spec.name];
-      echo.textContent = read ? `= ${read}` : "";
-      echo.title = echo.textContent;
+      const read = reply.echo[spec.name] ? `= ${reply.echo[spec.name]}` : "";
+      // Written only where it differs: forty fields at every key would cost as much as a block of equations.
+      if (message.textContent !== (wrong || "")) message.textContent = wrong || "";
+      if (control.getAttribute("aria-invalid") !== String(Boolean(wrong))) control.setAttribute("aria-invalid", Boolean(wrong));
+      if (echo.textContent !== read) echo.title = echo.textContent = read;
     },
   };
+}
+
+/** Brings the form into view once the workbook has run, since the notebook ends up at the last cell; not where the
+    reader has scrolled, clicked or typed meanwhile, nor where a page is opened on a workbook that has run before. */
+function comeIntoView(model, el) {
+  if (model.get("complete")) return () => {};
+  const acts = ["wheel", "pointerdown", "keydown", "touchmove"];
+  let timer = 0;
+  function stop() {
+    clearInterval(timer);
+    for (const act of acts) window.removeEventListener(act, stop, true);
+    model.off("change:complete", start);
+  }
+  function start() {
+    const end = Date.now() + ARRIVAL;
+    timer = setInterval(() => {
+      const page = el.closest(".jp-WindowedPanel-outer") || document.documentElement;
+      const top = el.getBoundingClientRect().top - page.getBoundingClientRect().top;
+      if (el.isConnected && (top < -5 || top > page.clientHeight / 2)) el.scrollIntoView({ block: "start" });
+      if (Date.now() > end) stop();
+    }, 100);
+  }
+  for (const act of acts) window.addEventListener(act, stop, true);
+  model.on("change:complete", start);
+  return stop;
 }
 
 function render({ model, el }) {
@@ -257,7 +308,7 @@ function render({ model, el }) {
   const fieldOf = new Map(fields.map((field) => [field.control, field]));
   let staleOutputs = false, told = "";
 
-  const line = openLine(model, showSilence);
+  const line = openLine(model, () => outputs.inView(), showSilence);
   const outputs = watchOutputs(el, () => ({ stamp: model.get("reply").stamp, silent: line.isSilent() }), (stale) => {
     staleOutputs = stale;
     showBanner();
@@ -388,17 +439,24 @@ function render({ model, el }) {
 
   model.on("change:texts", showTexts);
   model.on("change:reply", showReply);
+  model.on("change:fields", () => model.get("fields").forEach((spec, i) => fields[i].describe(spec)));
+  model.on("msg:custom", ({ drawn }) => {
+    // After the next frame: what was sent before this message is then on the screen.
+    if (drawn) requestAnimationFrame(() => setTimeout(() => model.send({ painted: drawn })));
+  });
   // A restart kills the widget in the kernel. Where the front end tells of one, ask at once; else at the next focus.
   const kernel = model.widget_manager?.kernel;
   const onStatus = (_, state) => { if (state !== "idle" && state !== "busy") line.ask(); };
   kernel?.statusChanged?.connect(onStatus);
   model.on("comm_live_update", () => line.ask());
+  const stopArriving = comeIntoView(model, el);
   showTexts();
   showReply();
   line.ask();
   const attached = setInterval(() => { if (el.isConnected) { clearInterval(attached); outputs.check(); } }, 100);
   return () => {
     clearInterval(attached);
+    stopArriving();
     kernel?.statusChanged?.disconnect(onStatus);
     line.close();
     outputs.close();

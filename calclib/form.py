@@ -19,7 +19,8 @@ from IPython.display import display
 from calclib.errors import CalcError, nearest
 
 PACKAGE = files("calclib")
-FIELD_KEYS = {"name", "label", "symbol", "unit", "group", "help", "choices", "search", "example", "optional", "slider"}
+FIELD_KEYS = {"name", "label", "symbol", "unit", "group", "help", "choices", "search", "example", "optional", "slider",
+              "blank"}
 ANSWER_KEYS = {"ok", "messages", "echo", "stamp", "status"}
 STAMP = re.compile(r"[0-9a-f]{8,64}( [0-9a-f]{8,64})*")
 SILENT = {"ok": True, "text": "", "earlier": False}  # what the buttons have to say before one is pressed
@@ -38,16 +39,20 @@ class Form(anywidget.AnyWidget):
     ----------
     fields : list of dicts, one a field, in tab order. Needed: "name" and "label". Optional: "symbol" ("d_h", shown with
         a subscript), "unit" (a hint: "in or mm"), "group" (heading), "help" (one sentence), "choices" (list of texts),
-        "search" (True: a long list, searched by typing), "example" ("13/16 in"), "optional" (True). "slider" is for
-        the plots; the form passes over it.
+        "search" (True: a long list, searched by typing), "example" ("13/16 in"), "optional" (True), "blank" (what
+        stands for an empty entry: "letter, by default"). "slider" is for the plots; the form passes over it.
     texts : dict, name -> text as typed; a field without one starts empty.
     judge : called as `judge(name, text, texts)` after every change, and once as `judge(None, None, texts)` when the
         form is made. Returns a dict: "ok" (bool), and optionally "messages" (name -> what is wrong), "echo" (name ->
-        the value as read), "status" (one line) and "stamp" (8 to 64 hex digits, several
-        apart by spaces). Without a stamp no figure belongs to
-        these texts, and every stamped output is shown as stale.
+        the value as read), "status" (one line) and "stamp" (8 to 64 hex digits, several apart by spaces). Without a
+        stamp no figure belongs to these texts, and every stamped output is shown as stale. The judge may set `fields`
+        where a unit or a default changes; names, labels and order stay. `in_view` tells it the stamps of the outputs
+        that the reader has before the eyes.
     on_save, on_issue : called without arguments by the buttons; the text they return is shown. Without a function
         there is no button.
+    on_painted : called with the number of a message {"drawn": number} once the page has painted what came before it.
+
+    Set `complete` when the last output stands: the page then brings the form into view, once.
 
     Widget messages arrive on a second thread, so everything that calls the judge holds `form.lock`, an RLock. Code
     outside the form that redraws the same outputs holds it too.
@@ -61,8 +66,9 @@ class Form(anywidget.AnyWidget):
     buttons = traitlets.List().tag(sync=True)
     texts = traitlets.Dict().tag(sync=True)
     reply = traitlets.Dict().tag(sync=True)
+    complete = traitlets.Bool(False).tag(sync=True)
 
-    def __init__(self, fields, texts, judge, on_save=None, on_issue=None):
+    def __init__(self, fields, texts, judge, on_save=None, on_issue=None, on_painted=None):
         names = _checked_fields(fields)
         for name in texts:
             if name not in names:
@@ -71,6 +77,8 @@ class Form(anywidget.AnyWidget):
                 raise ValueError(f"{name}: a field holds text, not {texts[name]!r}")
         self.lock = threading.RLock()
         self._judge = judge
+        self._on_painted = on_painted
+        self.in_view = []
         self._actions = {"save": on_save, "issue": on_issue}
         self._pressed_with = None  # the texts when a button was pressed last
         super().__init__(
@@ -94,12 +102,22 @@ class Form(anywidget.AnyWidget):
             self._press(button, "")
             return self.reply
 
-    def _receive(self, _widget, content, _buffers):
-        """Handle a message of the page: {"id", "edits": [[name, text], ...], "press": button or None}.
-
-        No edits and no button is the page asking whether anybody is there.
-        """
+    def fail(self, error):
+        """Show an exception of work that was done for the form elsewhere; no figure is vouched for any more."""
         with self.lock:
+            self.reply = {**self.reply, **_failed(error)}
+
+    def _receive(self, _widget, content, _buffers):
+        """Handle a message of the page: {"painted": number}, or what was typed and pressed.
+
+        The latter is {"id", "edits": [[name, text], ...], "press": button or None, "in_view": stamps}; no edits and no
+        button is the page asking whether anybody is there.
+        """
+        if "painted" in content:
+            self._on_painted(content["painted"])
+            return
+        with self.lock:
+            self.in_view = content["in_view"]
             message_id = content["id"]
             try:
                 steps = [(self._edit, name, text) for name, text in content["edits"]]

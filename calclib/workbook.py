@@ -14,7 +14,7 @@ outputs that changed; an entry that cannot be used leaves the last good calc whe
 
 import os
 from pathlib import Path
-from threading import RLock, Timer
+from threading import RLock
 
 from IPython.display import display
 
@@ -22,9 +22,9 @@ from calclib import bundles, document, record
 from calclib import case as cases
 from calclib.calc import evaluate
 from calclib.errors import CalcError, CaseErrors, EntryError, UnknownInput
+from calclib.live import LiveOutputs
 from calclib.members import KINDS
 
-SETTLE = 0.8  # seconds without a change until the drawings are stored as vectors too
 DRAWN = ("sketch_section", "sensitivity")  # groups of pictures
 _GROUPS = {group.__name__: group for group in document.SECTIONS}
 
@@ -65,13 +65,12 @@ class Workbook:
     """The calc that a notebook shows, and the outputs it is shown in."""
 
     def __init__(self, case):
-        self.case = case          # as typed, whether it can be used or not
+        self.case = case            # as typed, whether it can be used or not
         self.calc = evaluate(case)  # the last good calc
-        self.lock = RLock()       # widget messages arrive on a second thread
-        self._shown = {}          # (group, index) -> (display handle, bundle)
-        self._timer = None
-        self._vouched = ""        # the stamps that the form was told last
+        self.lock = RLock()         # widget messages arrive on a second thread
+        self.outputs = LiveOutputs(self._drawn, self._closing, self._tell, self._fail)
         self._form = None
+        self._vouch()
 
     # --- what the notebook calls
 
@@ -80,27 +79,30 @@ class Workbook:
         if not is_live():
             return
         from calclib.form import Form
-        self._form = Form(_form_fields(self.case), dict(self.case.texts), self._judge, self._save, self._issue)
+        self._form = Form(_form_fields(self.case), dict(self.case.texts), self._judge, self._save, self._issue,
+                          self.outputs.painted)
         display(self._form)
 
     def show(self, group):
         """Show one group of sections, each as ordinary outputs that are replaced when an input changes."""
-        with self.lock:
-            for index, output in enumerate(self._outputs(group, vectors=True)):
-                self._shown[group, index] = (_display(output), output)
+        with self.lock, self.outputs.pencil:
+            for key, output in self._made(group, self.calc, vectors=True).items():
+                self.outputs.show(key, output)
 
     def close(self):
         """Assert that the calc is consistent, and store the case and the record for the exporters."""
         with self.lock:
-            output = self._closing()
-            self._shown["close", 0] = (_display(output), output)
+            for key, output in self._closing(self.calc).items():
+                self.outputs.show(key, output)
+            if self._form:
+                self._form.complete = True
 
     # --- what the form calls
 
     def _judge(self, _name, _text, texts):
         with self.lock:
             self.case = self.case.with_texts(**texts)
-            messages, echo, status = {}, {}, ""
+            messages, echo, status, units_before = {}, {}, "", self.calc.x.units
             try:
                 self.calc = evaluate(self.case)
             except CaseErrors as errors:
@@ -110,14 +112,17 @@ class Workbook:
             except CalcError as error:
                 status = str(error)
             else:
-                self._vouched = self._stamps_of_calc()
+                self._vouch()
                 echo = document.echo(self.calc)
                 status = document.verdict(self.calc)["text"]
-                self._later(0, self._refresh)  # after the answer, so that the form is never kept waiting
+                if self._form:  # which has drawn nothing yet while it is being made
+                    if self.calc.x.units != units_before:
+                        self._form.fields = _form_fields(self.case)
+                    self.outputs.follow(self.calc, self._words, self._form.in_view)
             if messages:
                 status = "The calc below is the last good one; see the message beside the field."
             return {"ok": not (messages or (status and not echo)), "messages": messages, "echo": echo,
-                    "stamp": self._vouched, "status": status}
+                    "stamp": self._stamps, "status": status}
 
     def _save(self):
         with self.lock:
@@ -134,68 +139,46 @@ class Workbook:
             with Issuer() as issuer:
                 return "Issued: " + ", ".join(str(path) for path in issuer.issue(self.case.path, _exports()))
 
+    def _tell(self, number):
+        self._form.send({"drawn": number})
+
+    def _fail(self, error):
+        self._form.fail(error)
+
     # --- outputs
 
-    def _outputs(self, group, vectors):
-        make, digest = _GROUPS[group], self.calc.case.digest
-        sections = make(self.calc, vectors) if group in DRAWN else make(self.calc)
-        return [output for section in sections for output in bundles.outputs(section, digest)]
+    def _vouch(self):
+        """Make the words of the calc, and the stamps of every output that it will have; nothing is drawn for them."""
+        self._words, stamps = {}, []
+        for group in _GROUPS:
+            made = self._made(group, self.calc, vectors=None)
+            stamps += [output.stamp for output in made.values() if output.stamp]
+            if group not in DRAWN:
+                self._words.update(made)
+        self._stamps = " ".join(dict.fromkeys(stamps))
 
-    def _stamps_of_calc(self):
-        """Return the stamps of every output that the present calc will have; nothing is drawn for it."""
-        groups = dict.fromkeys(group for group, _ in self._shown if group != "close")
-        made = [output for group in groups if group not in DRAWN for output in self._outputs(group, False)]
-        captions = [output for group in groups if group in DRAWN
-                    for section in _GROUPS[group](self.calc, vectors=None)
-                    for output in bundles.outputs(section, self.calc.case.digest)]
-        return " ".join(dict.fromkeys(output.stamp for output in made + captions if output.stamp))
+    @staticmethod
+    def _made(group, calc, vectors):
+        """Return {(group, index): Output} of a group of sections, as many of them whatever the inputs are."""
+        sections = _GROUPS[group](calc, vectors) if group in DRAWN else _GROUPS[group](calc)
+        made = [output for section in sections for output in bundles.outputs(section, calc.case.digest)]
+        places = {"detailing": 1, "sensitivity": 2 * len(calc.case.kind.plots)}.get(group, len(made))
+        return {(group, index): output
+                for index, output in enumerate(made + [bundles.BLANK] * (places - len(made)))}
 
-    def _refresh(self):
-        """Replace what changed: words and equations first, then the pictures, and when all is quiet their vectors."""
-        with self.lock:
-            for drawn in (False, True):
-                for group in dict.fromkeys(group for group, _ in self._shown if (group in DRAWN) == drawn):
-                    self._replace_group(group, vectors=False)
-            self._later(SETTLE, self._settle)
+    def _drawn(self, calc, vectors):
+        for group in DRAWN:
+            if (group, 0) in self.outputs.shown:
+                yield self._made(group, calc, vectors)
 
-    def _settle(self):
-        with self.lock:
-            for group in DRAWN:
-                self._replace_group(group, vectors=True)
-            self._replace(("close", 0), self._closing())
-
-    def _replace_group(self, group, vectors):
-        if group != "close":
-            for index, output in enumerate(self._outputs(group, vectors)):
-                self._replace((group, index), output)
-
-    def _replace(self, key, output):
-        handle, before = self._shown[key]
-        if output != before:
-            handle.update(output.data, raw=True, metadata=output.metadata)
-            self._shown[key] = (handle, output)
-
-    def _later(self, seconds, job):
-        """Do a job once no edit has come for a while; an edit that comes first starts the wait again."""
-        if self._timer:
-            self._timer.cancel()
-        self._timer = Timer(seconds, job)
-        self._timer.daemon = True
-        self._timer.start()
-
-    def _closing(self):
-        calc = self.calc
+    def _closing(self, calc):
         made = record.record(calc)
         _assert_consistent(calc, made)
         words = (f"Inputs {calc.case.digest}. {len(calc.limit_states)} limit states, {len(calc.rules)} detailing "
                  f"rules. {document.verdict(calc)['text']}")
-        stamps = [output.stamp for _, output in self._shown.values() if bundles.SECTION in output.data]
-        return bundles.Output({"text/plain": words, bundles.CALC: {
-            "document": document.cover(calc), "record": made, "case": calc.case.yaml(), "stamps": stamps}}, "")
-
-
-def _display(output):
-    return display(output.data, raw=True, display_id=True, metadata=output.metadata)
+        stamps = [output.stamp for output in self.outputs.shown.values() if bundles.SECTION in output.data]
+        return {("close", 0): bundles.Output({"text/plain": words, bundles.CALC: {
+            "document": document.cover(calc), "record": made, "case": calc.case.yaml(), "stamps": stamps}}, "")}
 
 
 def _assert_consistent(calc, made):
@@ -217,4 +200,5 @@ def _form_fields(case):
     return [{"name": each.name, "label": each.label, "symbol": each.symbol, "group": each.group, "help": each.meaning,
              "unit": each.dimension.printed[unit_set][0] if each.dimension else "",
              "choices": list(each.choices) or None, "search": each.search, "example": each.example(unit_set),
+             "blank": f"{each.default_text(unit_set)}, by default" if each.default else "",
              "optional": each.optional or bool(each.default)} for each in case.kind.all_fields()]

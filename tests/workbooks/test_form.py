@@ -22,7 +22,7 @@ def agree(name, text, texts):
 
 def send(form, edits=(), press=None, message_id="v.1"):
     """Deliver a message of the page, as the kernel would."""
-    content = {"id": message_id, "edits": [list(edit) for edit in edits], "press": press}
+    content = {"id": message_id, "edits": [list(edit) for edit in edits], "press": press, "in_view": []}
     form._handle_custom_msg(content, [])
     return form.reply
 
