@@ -18,7 +18,8 @@ from calclib.issuing.issue import QUIET, _as_issued
 from calclib.members import KINDS
 
 FOLDER = Path(__file__).parent.parent / "workbooks"
-DEMO = {"pin_plate": "hanger_plate", "threaded_rod": "sag_rod", "welded_member": "welded_brace"}
+DEMO = {"pin_plate": "hanger_plate", "threaded_rod": "sag_rod", "welded_member": "welded_brace",
+        "built_up": "truss_chord"}
 TITLES = {
     "summary": "Summary of limit states", "scope": "Scope", "design_basis": "Design basis and materials",
     "loads": "Loads", "sketch_section": "Sketch to scale", "strength": "Limit states, one block each",

@@ -50,10 +50,10 @@ def fatigue_block(x, run, area, area_name):
     F_SR = part(fatigue.allowable_stress_range, C_f=category.C_f, n_SR=x.cycles, S_1=run.pair(fatigue.RANGE_CONSTANT),
                 F_TH=run.pair(category.F_TH))
     available = part(fatigue.allowable_force_range, F_SR=F_SR, A=area, note=f"A: {area_name}.")
-    if run.arrays:
-        available = np.where(few, np.nan, available)
     part.rated(available, "P_{SR,a}", x.force_range, "P_{SR}", "Appendix 3.3",
                fatigue.RANGE.text(run.edition).replace("3.2", "3.3"))
+    if run.arrays:            # few cycles have no limit, and no point on the curve
+        part.available = np.where(few, np.nan, part.available)
     run.note("Fatigue is judged at service load by the range of force, without resistance or safety factor. Appendix 3 "
              "covers peak service stresses up to 0.66 F_y, and steel up to 300 °F (150 °C) that is protected from "
              "corrosion or only mildly exposed.", "Appendix 3.1")

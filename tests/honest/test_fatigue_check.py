@@ -85,3 +85,7 @@ def test_a_sweep_over_cycles_is_the_single_cases():
 def test_category_f_is_not_offered():
     """It stands on the throat of a weld, not on an area of the base metal."""
     assert CATEGORIES == ("A", "B", "B'", "C", "D", "E", "E'", "G")
+
+
+def test_few_cycles_leave_the_other_limit_states_of_a_sweep_alone():
+    assert not np.any(run_of(arrays=True, cycles=np.array([1e4, 1e5])).outside)
