@@ -98,6 +98,16 @@ REQUIRED = {  # what each case cannot do without: (words of the case, fields)
 }
 
 
+def unused(x):
+    """Return the labels of what is entered and has no place in this case."""
+    plates, ties, covers = x.arrangement == PLATES, x.held_by == TIES, x.held_by == COVERS
+    used = {"section": not plates, "back_to_back": not plates, "plates": plates, "plate_width": plates or covers,
+            "plate_thickness": plates or ties or covers, "line_distance": ties or covers, "tie_length": ties,
+            "tie_fastener_spacing": ties, "x_bar": x.connected != ALL,
+            **{field.name: covers for field in FIELDS if field.name.startswith("perforation")}}
+    return [field.label for field in FIELDS if not used.get(field.name, True) and getattr(x, field.name) is not None]
+
+
 @dataclass(frozen=True)
 class Parts:
     """Dimensions of one main part in the unit of the calc; None where it has none. `n`: how many there are."""

@@ -2,7 +2,18 @@
 
 from calclib import units
 from calclib.equations.aisc360 import bearing, built_up, members
-from calclib.members.built_up_parts import ALL, ANGLES, CHANNELS, COVERS, END_BOLTS, PLATES, TIES, TOES, WEATHERING
+from calclib.members.built_up_parts import (
+    ALL,
+    ANGLES,
+    CHANNELS,
+    COVERS,
+    END_BOLTS,
+    PLATES,
+    TIES,
+    TOES,
+    WEATHERING,
+    unused,
+)
 from calclib.tables.shapes import SOURCE
 from calclib.tolerance import at_least, at_most
 
@@ -162,6 +173,11 @@ def messages(x, run, p):
                 + "; where an element is not connected, U is less than 1.", "Table D3.1",
                 when=not run.arrays and x.connected == ALL and x.end_connection == END_BOLTS and p.is_shape
                 and not everywhere)
+    run.caution("No hole is counted in the cover plates; they belong to the net area only where the end connection "
+                "holds them.", "B4.3b", when=not run.arrays and x.held_by == COVERS and x.end_connection == END_BOLTS
+                and x.cover_holes == 0)
+    left = unused(x)
+    run.caution(f"Entered and not used in this case: {', '.join(left)}.", when=bool(left))
     run.note("The section is tabulated in inches; its dimensions are converted to mm exactly and not rounded.",
              when=x.units == units.SI and p.is_shape)
     run.note("Tie plates are taken on both open sides and at both ends of the member, as near the ends as the "

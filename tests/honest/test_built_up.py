@@ -401,3 +401,18 @@ def test_what_was_not_read_in_the_2016_edition_says_so():
     cites = {r.key: r.cite for r in calc(**E16).rules}
     assert cites["tie plate length"] == cites["component slenderness"] == "AISC 360-16 D4 (from memory, verify)"
     assert {r.key: r.cite for r in calc().rules}["tie plate length"] == "AISC 360-22 D4"
+
+
+def test_what_is_entered_and_not_used_is_said():
+    assert "not used" not in " ".join(cautions(**changes) for changes in ARRANGEMENTS.values())
+    assert "Entered and not used in this case: Section of one part, Distance back to back." in cautions(
+        **PLATES | {"section": "C10x20", "back_to_back": "1 in"})
+    assert "not used in this case: Length of tie plates, Width of perforations." in cautions(
+        **ANGLES | {"tie_length": "9 in", "perforation_width": "3 in"})
+    assert "not used in this case: Distance to centroid." in cautions(connected="all elements", flange_holes="2",
+                                                                       x_bar="1 in")
+
+
+def test_cover_plates_without_holes_in_a_bolted_end_are_cautioned():
+    assert "No hole is counted in the cover plates" in cautions(**COVERS | {"cover_holes": "0"})
+    assert "No hole is counted in the cover plates" not in cautions(**COVERS)
