@@ -4,12 +4,14 @@ The page typesets every equation that it is sent before it paints any. So the ne
 that it has painted the one before; an edit that comes meanwhile drops what is left of the older calc.
 """
 
+import atexit
 from threading import Condition, Lock, RLock, Thread
 
 from IPython.display import display
 
 PATIENCE = 0.5  # seconds until a page that does not answer, such as one in the background, is sent the next output
 SETTLE = 0.8    # seconds without an edit until the drawings are stored as vectors too
+_END = object()
 
 
 class LiveOutputs:
@@ -52,6 +54,7 @@ class LiveOutputs:
             if self._thread is None:
                 self._thread = Thread(target=self._run, name="outputs of the calc", daemon=True)
                 self._thread.start()
+                atexit.register(self.end)  # a thread that is cut off while it draws takes the process down with it
 
     def painted(self, number):
         """Take note that the page has painted what `told` was called for."""
@@ -59,11 +62,20 @@ class LiveOutputs:
             self._painted = max(self._painted, number)
             self._news.notify_all()
 
+    def end(self):
+        """Stop following; what is being drawn is finished."""
+        with self._news:
+            self._target = _END
+            self._news.notify_all()
+        self._thread.join()
+
     def _run(self):
         while True:
             with self._news:
                 self._news.wait_for(lambda: self._target is not self._done)
                 target = self._done = self._target
+            if target is _END:
+                return
             try:
                 self._bring(target)
             except Exception as error:  # nobody waits for this thread, so what went wrong has to be told
