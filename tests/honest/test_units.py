@@ -9,8 +9,8 @@ from hypothesis import assume, given
 from hypothesis import strategies as st
 
 from calclib import units
-from calclib.calc import TOLERANCE
 from calclib.errors import EntryError
+from calclib.tolerance import RELATIVE
 from calclib.units import AREA, FORCE, LENGTH, NUMBER, PITCH, SI, STRESS, US, read
 
 DENOMINATORS = (2, 4, 8, 16, 32, 64)
@@ -214,5 +214,5 @@ def test_a_printed_ratio_is_never_below_the_ratio_and_less_than_a_unit_above(val
 
 @given(st.floats(0.9, 1.1) | st.floats(1 - 3e-9, 1 + 3e-9))
 def test_a_ratio_that_prints_as_one_or_less_passes_and_any_other_fails(value):
-    assume(abs(value - 1 - TOLERANCE) > 1e-14)
-    assert (float(units.ratio_text(value)) <= 1) == (value <= 1 + TOLERANCE)
+    assume(abs(value - 1 - RELATIVE) > 1e-14)
+    assert (float(units.ratio_text(value)) <= 1) == (value <= 1 + RELATIVE)
