@@ -382,3 +382,25 @@ def slip_with_longitudinal_fillets(R_ns, R_nw):
     """
     R_n = R_ns + R_nw
     return R_n
+
+
+@equation(cite("J3.7", "J3.6"))
+def strength_of_equal_bolts(n, r_n):
+    """Return the nominal strength of bolts of equal strength.
+
+    Parameters
+    ----------
+    n : number of bolts [1], positive
+    r_n : nominal strength of one [kip or N], positive
+
+    Returns
+    -------
+    R_n : nominal strength of all [kip or N]
+
+    Source: AISC 360-22 J3.7 and J3.9 (360-16 J3.6 and J3.8).
+
+    >>> strength_of_equal_bolts(n=11, r_n=26.5)
+    291.5
+    """
+    R_n = n * r_n
+    return R_n
