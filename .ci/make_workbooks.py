@@ -19,7 +19,7 @@ from calclib.members import KINDS
 
 FOLDER = Path(__file__).parent.parent / "workbooks"
 DEMO = {"pin_plate": "hanger_plate", "threaded_rod": "sag_rod", "welded_member": "welded_brace",
-        "built_up": "truss_chord", "bolted_member": "canopy_brace"}
+        "slotted_hss": "slotted_brace", "built_up": "truss_chord", "bolted_member": "canopy_brace"}
 TITLES = {
     "summary": "Summary of limit states", "scope": "Scope", "design_basis": "Design basis and materials",
     "loads": "Loads", "sketch_section": "Sketch to scale", "strength": "Limit states, one block each",

@@ -31,3 +31,23 @@ def welded(**changes):
 def flat(**changes):
     """Return a case of a flat plate with some texts changed."""
     return welded(**{**FLAT, **changes})
+
+
+SLOTTED = {
+    **{name: text for name, text in WELDED.items() if name not in ("welded_element", "weld_layout", "weld_length_1")},
+    "steel": "ASTM A500 Grade C", "F_u": "62 ksi", "section": "HSS6.000x0.500", "hss_standard": "A500",
+    "connection": "one gusset through slots", "weld_length": "16 in",
+}
+SLOTTED_SI = {
+    **SLOTTED, **STEEL_SI, "F_u": "427.474952178 MPa", "required_strength": "444.82216152605 kN",
+    "weld_length": "406.4 mm", "weld_size": "6.35 mm", "gusset_thickness": "12.7 mm", "gusset_width": "508 mm",
+    "slot_width": "14.2875 mm",
+}
+# HSS 6x6x3/8 to A1085: full wall, and the area that goes with it.
+SQUARE = {"section": "HSS6x6x3/8", "hss_standard": "A1085", "gross_area": "8.08 in2", "F_u": "65 ksi",
+          "weld_length": "12 in", "gusset_thickness": "3/4 in", "weld_size": "5/16 in"}
+
+
+def slotted(**changes):
+    """Return a slotted hollow section case in US units with some texts changed."""
+    return Case(KINDS["slotted_hss"], {**SLOTTED, **changes})

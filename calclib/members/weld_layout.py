@@ -12,7 +12,7 @@ from calclib.equations.aisc360 import (
 )
 from calclib.errors import EntryError
 from calclib.members import gusset
-from calclib.members.block_shear import u_bs_field
+from calclib.members.block_shear import UNIFORM, u_bs_field
 from calclib.members.fields import NO, YES, Field
 from calclib.members.steel import TENSILE_STRENGTH, YIELD_STRESS
 from calclib.tolerance import at_most
@@ -44,11 +44,11 @@ BLOCKS = (
     u_bs_field("gusset_U_bs", "U_bs of the gusset", "Block shear"),
 )
 OWN_U = (
-    Field("given_U", "Shear lag factor, given", "Shear lag",
-          "Only to put a factor of your own in the place of the computed one.", "U", units.NUMBER, optional=True,
+    Field("user_U", "Shear lag factor", "Shear lag",
+          "Factor of the engineer in the place of Table D3.1; blank: by the table.", "U", units.NUMBER, optional=True,
           above=0),
-    Field("given_U_reason", "Reason for the given factor", "Shear lag",
-          "Why the given factor holds: test, analysis or document.", optional=True),
+    Field("user_U_reason", "Reason for the factor", "Shear lag",
+          "Why the factor differs from the table; compulsory with a factor of the engineer.", optional=True),
 )
 SLENDER = (
     Field("member_length", "Member length", "Slenderness",
@@ -83,18 +83,19 @@ def refuse_filler(x, run):
 
 def own_factor(x, run, part, computed):
     """Return the shear lag factor that counts: the computed one, or the one given with its reason."""
-    if x.given_U is None:
+    if x.user_U is None:
         return computed
-    run.require(x.given_U <= 1, "given_U", "{U} is above 1; a shear lag factor lies above 0 and up to 1",
-                U=(x.given_U, units.NUMBER))
-    if not x.given_U_reason:
-        raise EntryError("given_U_reason", "is empty and a shear lag factor is given; state the test, analysis or "
+    run.require(x.user_U <= 1, "user_U", "{U} is above 1; a shear lag factor lies above 0 and up to 1",
+                U=(x.user_U, units.NUMBER))
+    if not x.user_U_reason and not run.silent:
+        raise EntryError("user_U_reason", "is empty and a shear lag factor is given; state the test, analysis or "
                                            "document it is from, or leave the factor blank")
+    reason = _sentence(x.user_U_reason or "")
     run.caution("The shear lag factor {U} is given and takes the place of the computed {computed}. Reason: {reason}",
-                "Table D3.1", U=(x.given_U, units.NUMBER),
-                computed=(computed, units.NUMBER), reason=_sentence(x.given_U_reason))
-    return part.given("U", units.NUMBER, x.given_U, "given", f"Given in place of the computed factor. Reason: "
-                      f"{_sentence(x.given_U_reason)}")
+                "Table D3.1", U=(x.user_U, units.NUMBER),
+                computed=(computed, units.NUMBER), reason=reason)
+    return part.given("U", units.NUMBER, x.user_U, "given", "Given in place of the computed factor. Reason: "
+                      + reason)
 
 
 def _sentence(text):
@@ -155,6 +156,21 @@ def gusset_tension(x, run, w, L_s, count, reason=""):
     for what in ("yielding", "rupture"):
         run.block(f"gusset {what}", f"Tensile {what} of the gusset").not_applicable(reason)
     run.caution("The gusset is not checked in tension. " + reason, "J4.1")
+
+
+def gusset_block(x, run, w, l_1, l_2, n):
+    """Add block shear of `n` gussets within two longitudinal welds `w` apart: shear along each, tension across."""
+    part = run.block("gusset block shear", "Block shear of the gusset at the welds")
+    names = {"n": "n_{g}", "t": "t_{g}"}
+    A_gv = part(weld_groups.area_along_welds, n=n, l_1=l_1, l_2=l_2, t=x.gusset_thickness, symbols=names,
+                note="Shear along the welds; without holes the net area is the same.")
+    A_nt = part(weld_groups.area_of_strips, n=n, w=w, t=x.gusset_thickness, symbols={**names, "A": "A_{nt}"},
+                note="Tension across, between the welds.")
+    U_bs = part.given("U_{bs}", units.NUMBER, 1.0 if x.gusset_U_bs == UNIFORM else 0.5, run.cite("J4.3"),
+                      "Input; the welds hold the block on both sides.")
+    R_n = part(connecting.block_shear, F_u=x.gusset_F_u, F_y=x.gusset_F_y, A_nv=A_gv, A_gv=A_gv, U_bs=U_bs, A_nt=A_nt,
+               symbols={"F_y": "F_{yg}", "F_u": "F_{ug}", "A_nv": "A_{gv}"})
+    part.limit_state(RUPTURE, R_n, "R_{n}", "J4.3")
 
 
 def cut(kind, points, thickness, part="plate"):

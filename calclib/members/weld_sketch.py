@@ -35,14 +35,13 @@ def spread_lines(x, w, length, low, high):
             for s, end in ((-1, below), (1, above))], below, above
 
 
-def draw_welded(x, calc, m, straight, across):
+def draw_welded(x, calc, m, seen, lap, straight=True, across=0):
     """Return the drawing. The member ends at x = 0 and pulls to the right; the gusset ends at x = lap.
 
-    `m`: the member; `straight`: whether it has longitudinal welds; `across`: transverse welds, 0 to 2.
+    `m`: the member, with its welds `l_1` and `l_2`, the width `w` between them and `x_bar`; `seen`: its Profile;
+    `straight`: whether it has longitudinal welds; `across`: transverse welds, 0 to 2.
     """
-    seen = profile(x, m)
     w, b, a = m.w, seen.depth, x.weld_size
-    lap = max(m.l_1, m.l_2, x.lap or 0)
     low = -w / 2 - ((x.gusset_width - w) / 2 if x.gusset_edge is None else x.gusset_edge)
     high = low + x.gusset_width
     lines, below, above = spread_lines(x, w, min(m.l_1, m.l_2), low, high)
@@ -69,14 +68,14 @@ def draw_welded(x, calc, m, straight, across):
     where = (0.7 * m.l_2, w / 2 + a / 2) if straight else (0, 0.3 * w)
     parts.append(Leader(where, (2.2, 3.2) if straight else (-2.6, 2.4), named(x, "w_f", a)))
     parts.append(Dimension((0, -w / 2), (0, w / 2), -1.2, named(x, "w", w), "vertical", beyond=(left, 0)))
-    parts += _failure(calc, m, x, seen, lap, right, (below, above), straight, across)
+    parts += _failure(calc, m, seen, lap, right, (below, above), straight, across)
     wide = -min(z for ring in seen.rings for z, _ in ring) + x.gusset_thickness
-    parts += section(x, m, seen, right + wide + 0.3 * max(right - left, high - low))
+    parts += section(x, m, seen, right + wide + 0.42 * max(right - left, 0.8 * (high - low)))
     note = f"Heavy broken line: {calc.governing.title.lower()}."
     return Drawing(parts, title="Elevation and section", unit="in" if x.units == "US" else "mm", note=note)
 
 
-def _failure(calc, m, x, seen, lap, right, spread, straight, across):
+def _failure(calc, m, seen, lap, right, spread, straight, across):
     """Return the path along which the governing limit state gives way."""
     key, w, b = calc.governing.key, m.w, seen.depth
     shears = [[(0, -w / 2), (m.l_1, -w / 2)], [(0, w / 2), (m.l_2, w / 2)]]

@@ -14,7 +14,7 @@ from calclib.members.fatigue_check import FATIGUE, fatigue_block
 from calclib.members.fields import NO, YES, Field, Kind, Plot, multiples
 from calclib.members.steel import refuse_stresses
 from calclib.members.weld_group import fillet_group
-from calclib.members.weld_sketch import draw_welded
+from calclib.members.weld_sketch import draw_welded, profile
 from calclib.members.welded_section import (
     DOUBLE,
     FLANGE,
@@ -211,10 +211,7 @@ def _block_shear(x, run, m):
     else:
         block_shear(run, key, title, [_member_path(m)], (0, 0), x.F_y, x.F_u, x.member_U_bs,
                     "Input; the commentary shows 1 for a welded angle.", m.elements)
-    path = replace(weld_block(0.0, m.l_1, m.w, m.l_2, x.gusset_thickness), staggered=False)
-    block_shear(run, "gusset block shear", "Block shear of the gusset at the welds", [path], (0, 0), x.gusset_F_y,
-                x.gusset_F_u, x.gusset_U_bs, "Input; the welds hold the block on both sides.", m.gussets,
-                {"F_y": "F_{yg}", "F_u": "F_{ug}"})
+    layout.gusset_block(x, run, m.w, m.l_1, m.l_2, m.gussets)
 
 
 def _member_path(m):
@@ -294,7 +291,8 @@ def _messages(x, run, m):
 def sketch(x, calc):
     """Return elevation and section to scale, with the path of the governing limit state."""
     m = section(x, type(calc.run)(x, silent=True))
-    return draw_welded(x, calc, m, x.weld_layout != TRANSVERSE, _across(x))
+    lap = max(m.l_1, m.l_2, x.lap or 0)
+    return draw_welded(x, calc, m, profile(x, m), lap, x.weld_layout != TRANSVERSE, _across(x))
 
 
 def _lengths(x):

@@ -28,7 +28,7 @@ EVERY = {
     "plate": FLAT, "plate between gussets": {**FLAT, "plate_lap": "both faces, a gusset on each"},
     "mixed": {**FLAT, **MIXED}, "mixed angle": {**ANGLE, **MIXED, "concentric": "yes"},
     "across": {**FLAT, **ACROSS}, "across at both ends": {**FLAT, **ACROSS, "transverse_ends": "both ends"},
-    "short of the edge": {**FLAT, "weld_spacing": "5 in"}, "own U": {"given_U": "0.8", "given_U_reason": "Tests"},
+    "short of the edge": {**FLAT, "weld_spacing": "5 in"}, "own U": {"user_U": "0.8", "user_U_reason": "Tests"},
 }
 
 
@@ -218,7 +218,7 @@ def test_slenderness_is_advice():
 
 
 def test_a_given_factor_is_printed_with_its_reason_and_never_silent():
-    calc = evaluate(welded(given_U="0.95", given_U_reason="Test report 12"))
+    calc = evaluate(welded(user_U="0.95", user_U_reason="Test report 12"))
     assert calc["net rupture"].nominal == pytest.approx(65 * 0.95 * 5.84)
     assert "0.95 is given and takes the place of the computed" in texts(calc.cautions)
     assert "Test report 12." in texts(calc.cautions)

@@ -39,9 +39,9 @@ from calclib.errors import CalcError
     ({"gusset_F_y": "65 ksi"}, "gusset_F_u: 65 ksi is not above the yield stress of 65 ksi; give the specified minimum "
                                "values of one grade."),
     ({"F_EXX": "7 ksi"}, "F_EXX: 7 ksi lies outside 60 ksi to 120 ksi, the range of filler metals; check its unit."),
-    ({"given_U": "1.1", "given_U_reason": "test"}, "given_U: 1.1 is above 1; a shear lag factor lies above 0 and up to "
+    ({"user_U": "1.1", "user_U_reason": "test"}, "user_U: 1.1 is above 1; a shear lag factor lies above 0 and up to "
                                                    "1."),
-    ({"given_U": "0.9"}, "given_U_reason: is empty and a shear lag factor is given; state the test, analysis or "
+    ({"user_U": "0.9"}, "user_U_reason: is empty and a shear lag factor is given; state the test, analysis or "
                          "document it is from, or leave the factor blank."),
     ({"gusset_width": "8 in"}, "gusset_width: 8 in does not hold a connection 8.01 in wide; use a wider gusset."),
     ({"standard": "AISC 360-16", "spread_angle": "45 degrees"},
