@@ -181,7 +181,7 @@ def _walk(found, again, seen, left_out):
 
 def _property_changes(found, again):
     """Yield (name, found, again) of the properties that differ, those in XMP whatever the layout of its XML."""
-    info, info_again = ({key: str(value) for key, value in (reader.metadata or {}).items()} for reader in (found, again))
+    info, info_again = ({key: str(value) for key, value in (each.metadata or {}).items()} for each in (found, again))
     for key in {**info_again, **info}:
         if info.get(key) != info_again.get(key):
             yield key, info.get(key), info_again.get(key)

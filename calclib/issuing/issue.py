@@ -97,14 +97,15 @@ class Issuer:
         from calclib.issuing.pdf import write_pdf
         name = f"{calc.x.calc_number}-rev-{calc.x.revision}"
         content = case.yaml()
-        notebook = self._run(case.kind, f"{name}.yaml", content)
-        document, case_text, record = pages.document_of(notebook)
+        stored = pages.serialised(self._run(case.kind, f"{name}.yaml", content))
+        # From the notebook as it is stored, so that nbconvert makes the same bytes of it.
+        document, case_text, record = pages.document_of(json.loads(stored))
         if case_text != content:
             raise CalcError(f"{name}: the workbook changed the case while it ran; nothing was issued.")
         files = {
             f"{name}.yaml": content.encode(),
             f"{name}.json": (json.dumps(record, indent=1, ensure_ascii=False) + "\n").encode(),
-            f"{name}.ipynb": pages.serialised(notebook),
+            f"{name}.ipynb": stored,
         }
         attachments = pages.attachments(files)
         files[f"{name}.html"] = write_html(document, attachments).encode()
