@@ -3,7 +3,7 @@
 import math
 
 from calclib import units
-from calclib.equations.aisc360 import RUPTURE, connecting
+from calclib.equations.aisc360 import RUPTURE, connecting, members
 from calclib.members.fields import Field
 
 UNIFORM, NOT_UNIFORM = "1, uniform tension", "0.5, tension not uniform"
@@ -42,7 +42,8 @@ def block_shear(run, key, title, paths, deductions, F_y, F_u, u_bs, reason, coun
     path = ranked[0]
     part.given("U_{bs}", units.NUMBER, U_bs, run.cite("J4.3"),
                f"{reason} {_compared(run, ranked, F_y, F_u, U_bs, count)}")
-    areas = [_area(part, path, kind, net, deductions, count)
+    widths = _deducted(part, deductions)
+    areas = [_area(part, path, kind, net, widths, count)
              for kind, net in (("shear", False), ("shear", True), ("tension", True))]
     R_n = part(connecting.block_shear, F_u=F_u, F_y=F_y, A_nv=areas[1], A_gv=areas[0], U_bs=U_bs, A_nt=areas[2],
                symbols=symbols)
@@ -62,7 +63,19 @@ def _compared(run, ranked, F_y, F_u, U_bs, count):
                                          " There is no other path.")
 
 
-def _area(part, path, kind, net, deductions, count):
+def _deducted(part, deductions):
+    """Write out what a hole takes from a shear line and from a tension line, and return each with its symbol."""
+    if not any(deductions):
+        return [(0.0, "d_{e}")] * 2
+    allowance = part.run.pair(members.HOLE_ALLOWANCE)
+    one = len(set(deductions)) == 1
+    symbols = ["d_{e}"] * 2 if one else ["d_{e,v}", "d_{e,t}"]
+    for deduction, symbol in list(zip(deductions, symbols, strict=True))[:1 if one else 2]:
+        part(members.width_of_hole_deducted, d_h=deduction - allowance, Delta_h=allowance, symbols={"d_e": symbol})
+    return list(zip(deductions, symbols, strict=True))
+
+
+def _area(part, path, kind, net, widths, count):
     """Write out one area of a path, cuts of one length together, and return it [in2 or mm2]."""
     letter = "v" if kind == "shear" else "t"
     groups = {}
@@ -87,8 +100,9 @@ def _area(part, path, kind, net, deductions, count):
             gross = part(connecting.gross_area_of_cuts, n_c=n, L_c=length, t=thickness,
                          symbols={"A_gv": f"A_{{gt{mark}}}"})
         areas.append(part(connecting.net_area_of_cuts, A_gv=gross, n_h=n * holes,
-                          d_e=deductions[kind == "tension"], t=thickness,
-                          symbols={"A_gv": f"A_{{g{letter}{mark}}}", "A_nv": f"A_{{n{letter}{mark}}}"}))
+                          d_e=widths[kind == "tension"][0], t=thickness,
+                          symbols={"d_e": widths[kind == "tension"][1], "A_gv": f"A_{{g{letter}{mark}}}",
+                                   "A_nv": f"A_{{n{letter}{mark}}}"}))
     total = areas[0]
     for area in areas[1:]:
         total = part(connecting.area_of_two_cuts, A_1=total, A_2=area,

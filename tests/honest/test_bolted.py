@@ -5,7 +5,9 @@ import math
 import numpy as np
 import pytest
 from bolted import bolted
+from pocket import check
 
+from calclib import document
 from calclib.calc import evaluate, sweep
 from calclib.equations.aisc360 import bearing, bolts, connecting, members, shear_lag
 from calclib.sketch import draw
@@ -446,3 +448,27 @@ def test_plots_of_a_pattern_are_not_drawn_for_places():
     x = evaluate(bolted(rows="", pitch="", end_distance="", first_line="", bolt_places="2 in, 2.5 in; 5 in, 2.5 in")).x
     kind = bolted().kind
     assert [p.field for p in kind.plots if p.applies is None or p.applies(x)] == ["hole_diameter", "user_U"]
+
+
+PRINTED = {
+    **CASES, "metric": SI, "metric plate": SI | {"section": "", "plate_width": "200 mm", "plate_thickness": "12 mm",
+                                                 "lines": "2", "gage": "80 mm", "first_line": "", "stagger": "40 mm"},
+    "slip": {"joint": "slip-critical", "hole_kind": "oversize", "fillers": "two or more", "filler_thickness": "3/8 in"},
+    "long": {"rows": "14", "pitch": "3-1/4 in", "gusset_width": "60 in", "threads": "X, not in the shear plane"},
+    "A307": {"bolt_group": "A307", "gusset_thickness": "4 in"}, "slots": {"hole_kind": "long slot"},
+    "2016": E16 | ASD | {"hole_diameter": "7/8 in", "deformation": "no", "length": "20 ft"},
+    "wide": {"spread_angle": "45 degrees", "gusset_edge": "3 in", "user_U": "0.8", "user_U_reason": "Test"},
+    "misplaced": {"rows": "", "pitch": "", "end_distance": "", "first_line": "", "open_holes": "4 in, 1.2 in",
+                  "bolt_places": "2 in, 2.5 in; 5.1 in, 2.6 in; 7.8 in, 2.45 in"},
+    "fatigue": {"cycles": "300000", "force_range": "30 kip", "stress_category": "B"},
+}
+
+
+@pytest.mark.parametrize("name", PRINTED)
+def test_every_printed_line_comes_out_on_a_pocket_calculator(name):
+    calc, known = evaluate(bolted(**PRINTED[name])), {}
+    for block in calc.blocks:
+        for node in document.block_nodes(calc, block):
+            if node["type"] == "equation":
+                check(node["lhs"], node["symbolic"], node["substituted"], node["result"], known)
+    assert len(known) > 30
