@@ -108,11 +108,19 @@ def main(argv=None):
     try:
         return arguments.run(arguments)
     except CalcError as error:
-        print(error, file=sys.stderr)
+        print(_plain(str(error)), file=sys.stderr)
         return ERROR
     except BrokenPipeError:  # whoever read the output has heard enough
         os.dup2(os.open(os.devnull, os.O_WRONLY), sys.stdout.fileno())
         return ERROR
+    except OSError as error:
+        print(f"{error.filename}: {error.strerror}.", file=sys.stderr)
+        return ERROR
+
+
+def _plain(text):
+    """Return a message with the control characters of a stranger's file shown as missing: none steers a terminal."""
+    return "".join(c if c.isprintable() or c == "\n" else "\ufffd" for c in text)
 
 
 if __name__ == "__main__":

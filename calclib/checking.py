@@ -125,13 +125,14 @@ def _check_folder(folder, issuer):
 
 def _built(carried, issuer, report):
     """Return what is issued again from the inputs carried; inputs changed after issue may allow nothing."""
-    if carried.record.get("digest") == carried.case.digest:
-        return issuer.build(carried.case)
-    report.find(ALTERED, f"{carried.name}: the inputs have the digest {carried.case.digest}, the record says "
-                         f"{carried.record.get('digest')}: inputs or record were changed after issue")
+    if carried.record["digest"] != carried.case.digest:
+        report.find(ALTERED, f"{carried.name}: the inputs have the digest {carried.case.digest}, the record says "
+                             f"{carried.record['digest']}: inputs or record were changed after issue")
     try:
         return issuer.build(carried.case)
     except CalcError as error:
+        if not report.findings:
+            raise CalcError(f"{report.name}: nothing can be computed from the inputs it carries: {error}") from error
         report.find(ALTERED, f"{carried.name}: nothing can be computed from the inputs: {error}")
         return {}
 
