@@ -183,49 +183,12 @@ def _made_with(carried):
         return dict(carried.notebook["metadata"]["calclib"])
 
 
-_NOT_COMPUTED = r"(format|digest|inputs|revisions)\b"    # what a record repeats from the case
-
-
 def _compare_records(carried, again, report):
-    """Report each number of the record that is computed otherwise, and return whether there is any."""
-    found = [(place, old, new) for place, old, new in comparing.leaves(_by_key(carried.record), _by_key(again))
-             if place != "calclib"]
-    for place, old, new in found:
-        status = ALTERED if re.match(_NOT_COMPUTED, place) else DIFFERS
-        report.find(status, f"{carried.name}: {_named(place, again)}: record {_brief(old)}, recomputed {_brief(new)}"
-                    + _by(old, new))
-    return bool(found)
-
-
-def _by_key(record):
-    """Name limit states and rules by their keys, so that a new one does not shift all that follow."""
-    made = {**record, "results": dict(record["results"])}
-    for name in ("limit_states", "rules"):
-        rows = made["results"].get(name)
-        if isinstance(rows, list) and all(isinstance(row, dict) and isinstance(row.get("key"), str) for row in rows):
-            by_key = {row["key"]: row for row in rows}
-            if len(by_key) == len(rows):
-                made["results"] |= {name: by_key, f"order of {name}": list(by_key)}
-    return made
-
-
-def _named(place, record):
-    for group, word in (("limit_states", "limit state"), ("rules", "rule")):
-        for row in record["results"][group]:
-            start = f"results.{group}.{row['key']}"
-            if place == start or place.startswith(start + "."):
-                return f"{word} \"{row['title']}\"" + place[len(start):].replace(".", ", ", 1)
-    return place
-
-
-def _brief(value):
-    return json.dumps(value, ensure_ascii=False)[:160]
-
-
-def _by(old, new):
-    if type(old) in (int, float) and type(new) in (int, float) and new:
-        return f" ({(old / new - 1) * 100:+.3g} %)"
-    return ""
+    """Report what of the record is computed otherwise, and return whether there is anything."""
+    made = list(comparing.record_changes(carried.record, again))
+    for computed, words in made:
+        report.find(DIFFERS if computed else ALTERED, f"{carried.name}: {words}")
+    return bool(made)
 
 
 def _compare_whole(carried, again, files, report):

@@ -62,6 +62,60 @@ def numbers(text):
     return re.findall(r"\d+(?:\.\d+)*", text)
 
 
+# --- records ---------------------------------------------------------------------------------------------------
+
+_NOT_COMPUTED = ("format", "digest", "inputs", "revisions")    # what a record repeats from the case
+_FIRST = ("available_strength", "ratio", "nominal_strength", "required_strength", "phi", "omega")
+
+
+def record_changes(found, again):
+    """Yield (computed, words) of what differs in two records, limit states first, each with its numbers.
+
+    `computed` is False for what a record only repeats from its case. The version of calclib is left out.
+    """
+    groups = {}
+    for place, old, new in leaves(_by_key(found), _by_key(again)):
+        if place != "calclib":
+            rank, label, entry = _place(place, again)
+            groups.setdefault((rank, label, place.split(".")[0].partition("[")[0] not in _NOT_COMPUTED), []).append(
+                (_FIRST.index(entry) if entry in _FIRST else len(_FIRST),
+                 f"{entry}{': ' if entry else ''}record {_brief(old)}, recomputed {_brief(new)}{_by(old, new)}"))
+    for (_, label, computed), entries in sorted(groups.items()):
+        yield computed, f"{label}{'; '.join(words for _, words in sorted(entries))}"
+
+
+def _by_key(record):
+    """Name limit states and rules by their keys, so that a new one does not shift all that follow."""
+    made = {**record, "results": dict(record["results"])}
+    for name in ("limit_states", "rules"):
+        rows = made["results"].get(name)
+        if isinstance(rows, list) and all(isinstance(row, dict) and isinstance(row.get("key"), str) for row in rows):
+            by_key = {row["key"]: row for row in rows}
+            if len(by_key) == len(rows):
+                made["results"] |= {name: by_key, f"order of {name}": list(by_key)}
+    return made
+
+
+def _place(place, record):
+    """Return (rank, label, entry) of a place in a record."""
+    for rank, (group, word) in enumerate((("limit_states", "limit state"), ("rules", "rule"))):
+        for row in record["results"][group]:
+            start = f"results.{group}.{row['key']}"
+            if place == start or place.startswith(start + "."):
+                return rank, f"{word} \"{row['title']}\", ", place[len(start) + 1:]
+    return (2 if place.startswith("results") else 3), f"{place}: ", ""
+
+
+def _brief(value):
+    return json.dumps(value, ensure_ascii=False)[:160]
+
+
+def _by(old, new):
+    if type(old) in (int, float) and type(new) in (int, float) and new:
+        return f" ({(old / new - 1) * 100:+.3g} %)"
+    return ""
+
+
 # --- notebooks -------------------------------------------------------------------------------------------------
 
 def notebook_changes(found, again):
