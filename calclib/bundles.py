@@ -124,12 +124,13 @@ def _rows(node):
 def markdown_words(text):
     """Return text from people as Markdown that prints it and does nothing else, on one line.
 
-    >>> markdown_words("<b> *a* | $x$")
-    '&lt;b&gt; &#42;a&#42; &#124; \\\\\\\\$x\\\\\\\\$'
+    >>> markdown_words("<b> *a* $x$")
+    '&lt;b&gt; &#42;a&#42; <span>&#36;</span>x<span>&#36;</span>'
     """
     text = " ".join(text.split()).replace("&", "&amp;").replace("<", "&lt;").replace(">", "&gt;")
-    text = re.sub(r"[\\`*_{}\[\]#+!|~:]", lambda m: f"&#{ord(m[0])};", text)
-    return text.replace("$", r"\\$")  # the page's own mathematics turns \$ into a dollar sign
+    text = re.sub(r"[`*_{}\[\]#+!|~:]", lambda m: f"&#{ord(m[0])};", text)
+    # The page looks for formulas in the finished text, between dollar signs and after backslashes, never across tags.
+    return re.sub(r"[$\\]", lambda m: f"<span>&#{ord(m[0])};</span>", text)
 
 
 def markdown(title, nodes, stamp):

@@ -26,7 +26,7 @@ function make(tag, attributes = {}, ...children) {
 }
 
 /** Sends one message at a time. Edits made while one is out are merged into the next; the latest text wins. */
-function openLine(model, inView, report) {
+function openLine(model, inView, report, refuse) {
   const view = Math.random().toString(36).slice(2);
   const typed = new Map(); // name -> text that has to go out
   const late = new Map(); // id -> edits of messages given up on; the answer may come yet
@@ -48,7 +48,8 @@ function openLine(model, inView, report) {
   function giveUp() {
     late.set(waiting.id, waiting.edits);
     for (const [name, text] of waiting.edits) if (!typed.has(name)) typed.set(name, text);
-    wanted = null; // nobody wants an issue that starts by itself when the kernel comes back
+    if (wanted) refuse(wanted); // nobody wants an issue that starts by itself when the kernel comes back
+    wanted = null;
     pause = Math.min(2 * pause, SLOWEST_RETRY);
     setSilent(true);
     post(new Map(), null);
@@ -62,7 +63,11 @@ function openLine(model, inView, report) {
   }
   return {
     edit(name, text) { typed.set(name, text); flush(); },
-    press(button) { if (!silent) { wanted = button; flush(); } },
+    press(button) {
+      if (silent) return refuse(button);
+      wanted = button;
+      flush();
+    },
     ask() { if (!waiting) post(new Map(), null); },
     askIfQuiet() { if (!waiting && Date.now() - heard > 10000) post(new Map(), null); },
     unheard(name) { return typed.has(name) || Boolean(waiting?.edits.has(name)); },
@@ -308,7 +313,10 @@ function render({ model, el }) {
   const fieldOf = new Map(fields.map((field) => [field.control, field]));
   let staleOutputs = false, told = "";
 
-  const line = openLine(model, () => outputs.inView(), showSilence);
+  const line = openLine(model, () => outputs.inView(), showSilence, (button) => {
+    notice.textContent = `${BUTTONS[button][0]}: not done, the kernel does not answer. Press it again when it does.`;
+    notice.classList.add("calc-wrong");
+  });
   const outputs = watchOutputs(el, () => ({ stamp: model.get("reply").stamp, silent: line.isSilent() }), (stale) => {
     staleOutputs = stale;
     showBanner();
@@ -430,7 +438,12 @@ function render({ model, el }) {
   const foot = make("div", { class: "calc-foot" });
   for (const name of model.get("buttons")) {
     const button = make("button", { type: "button", "data-lm-suppress-shortcuts": "true" }, BUTTONS[name][0]);
-    button.addEventListener("click", () => line.press(name));
+    // The help below a field goes when the field is left; the button would move away from under the pointer.
+    button.addEventListener("mousedown", (event) => event.preventDefault());
+    button.addEventListener("click", () => {
+      button.focus();
+      line.press(name);
+    });
     foot.append(button);
   }
   foot.append(status);

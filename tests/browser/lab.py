@@ -48,7 +48,7 @@ def jupyter_lab(home):
             [sys.executable, "-m", "jupyterlab", "--no-browser", "--allow-root", f"--port={port}",
              "--ServerApp.token=", "--ServerApp.password=", f"--ServerApp.root_dir={folder}",
              "--LabApp.expose_app_in_browser=True", "--LabApp.news_url=None"],
-            env=environment, stdout=log, stderr=subprocess.STDOUT)
+            cwd=folder, env=environment, stdout=log, stderr=subprocess.STDOUT)
         try:
             url = f"http://127.0.0.1:{port}"
             _await(url + "/api/status", server)
