@@ -180,7 +180,9 @@ sys.exit(main(["issue", sys.argv[1], "--to", sys.argv[2]]))
 
 
 def killed(command, wait):
-    process = subprocess.Popen(command, stdout=subprocess.DEVNULL, stderr=subprocess.DEVNULL)
+    folder = command[-1]     # where it leaves what it had open, too
+    process = subprocess.Popen(command, stdout=subprocess.DEVNULL, stderr=subprocess.DEVNULL,
+                               env={**os.environ, "TMPDIR": os.path.dirname(folder)})
     wait(process)
     process.kill()
     process.wait()
