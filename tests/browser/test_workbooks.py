@@ -58,7 +58,8 @@ def outputs(page):
     """Return [stamps printed, holds a picture, marked stale] of each cell's outputs that print a stamp."""
     return page.locator(".jp-Notebook .jp-Cell-outputWrapper").evaluate_all("""all => all.map(one => [
         [...one.textContent.matchAll(/stamp\\s+([0-9a-f]{8})/g)].map(found => found[1]),
-        Boolean(one.querySelector('img')), one.classList.contains('calc-stale-output')]).filter(each => each[0].length)""")
+        Boolean(one.querySelector('img')), one.classList.contains('calc-stale-output'),
+    ]).filter(each => each[0].length)""")
 
 
 def wait_for(page, made, seconds=60):
