@@ -98,7 +98,7 @@ function watchOutputs(el, current, report) {
   const sight = new IntersectionObserver((entries) => {
     for (const entry of entries) entry.isIntersecting ? visible.add(entry.target) : visible.delete(entry.target);
   });
-  let timer = 0, observer = null, notebook = null;
+  let timer = 0, later = 0, observer = null, notebook = null;
 
   function stampsOf(output) {
     // A typeset formula holds no stamp, and its text is long.
@@ -108,13 +108,13 @@ function watchOutputs(el, current, report) {
   }
 
   function check() {
-    clearTimeout(timer);
-    timer = 0;
+    for (const each of [timer, later]) clearTimeout(each);
+    timer = later = 0;
     if (!notebook) {
       notebook = el.closest(".jp-Notebook");
       if (!notebook) return;
       observer = new MutationObserver((changes) => {
-        if (!changes.every((change) => el.contains(change.target))) timer ||= setTimeout(check, 100);
+        if (!changes.every((change) => el.contains(change.target))) checkSoon();
       });
       observer.observe(notebook, { childList: true, characterData: true, subtree: true });
     }
@@ -136,17 +136,18 @@ function watchOutputs(el, current, report) {
         observed.add(part);
       }
     }
-    if (settling) timer = setTimeout(check, SETTLE);
+    if (settling) later = setTimeout(check, SETTLE);
     notebook.classList.toggle("calc-stale", anyStale);
     report(anyStale);
   }
+  function checkSoon() { timer ||= setTimeout(check, 100); } // not before the answer is painted
   return {
-    check,
+    check, checkSoon,
     inView() { return [...visible].filter((part) => part.isConnected).flatMap(stampsOf); },
     close() {
       observer?.disconnect();
       sight.disconnect();
-      clearTimeout(timer);
+      for (const each of [timer, later]) clearTimeout(each);
       // A form that is gone vouches for nothing. Running its cell again puts a new one there, which looks for itself.
       const left = notebook;
       setTimeout(() => {
@@ -359,7 +360,7 @@ function render({ model, el }) {
     notice.textContent = reply.busy ? BUTTONS[reply.busy][1] : before + reply.notice.text;
     notice.classList.toggle("calc-wrong", !reply.notice.ok);
     showBanner();
-    outputs.check();
+    outputs.checkSoon();
   }
   function showTexts() {
     const texts = model.get("texts");
