@@ -70,7 +70,7 @@ def python(*arguments):
 
 
 def _watch(process, peak):
-    """Keep the greatest sum of resident memory of a process and everything below it (Linux)."""
+    """Keep the greatest memory of a process and all below it together, what they share counted once (Linux)."""
     while process.poll() is None:
         peak[0] = max(peak[0], sum(map(_resident, _family(process.pid))))
         sleep(0.05)
@@ -89,7 +89,7 @@ def _family(pid):
 
 def _resident(pid):
     try:
-        return int(re.search(r"VmRSS:\s+(\d+)", Path(f"/proc/{pid}/status").read_text())[1]) / 1024
+        return int(re.search(r"^Pss:\s+(\d+)", Path(f"/proc/{pid}/smaps_rollup").read_text(), re.MULTILINE)[1]) / 1024
     except (OSError, TypeError):  # ended meanwhile
         return 0
 
@@ -120,7 +120,7 @@ def main():
         print(f"issuing one calc cold: {median(cold):.2f} s, {median(cold) / median(bare):.2f} of a bare kernel with "
               f"an empty notebook ({median(bare):.2f} s)")
         print(f"each further calc in the same run: {median(further):.2f} s, {median(further) / median(bare):.2f} of it")
-        print(f"greatest resident memory of the processes together: {max(peaks):.0f} MB")
+        print(f"greatest memory of all its processes together: {max(peaks):.0f} MB")
         notebook = next(folder.glob("one-0/**/*.ipynb"))
         first, again, size = map(float, python("-c", OURS, notebook)[2].split())
         stock, stock_size = map(float, python("-c", STOCK, notebook, CHROMIUM, *FLAGS)[2].split())
