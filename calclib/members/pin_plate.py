@@ -108,10 +108,6 @@ def _length(run, value):
     return units.text(value, units.LENGTH, run.units)
 
 
-def _stresses(run, **values):
-    return {k: units.text(v, units.STRESS, run.units) for k, v in values.items()}
-
-
 def _clearance_words(run, relation, limit):
     return "" if run.arrays else f"Hole and pin differ by {relation} {_length(run, limit)}."
 

@@ -14,7 +14,7 @@ D3 = {"section": "WT6x20", "welded_element": "flange", "steel": "ASTM A992", "we
       "required_strength": "240 kip", "member_length": "30 ft", "gusset_width": "30 in"}
 J1 = {"section": "", "welded_element": "", "plate_width": "18 in", "plate_thickness": "1/4 in",
       "weld_length_1": "27 in", "weld_size": "3/16 in", "gusset_width": "40 in"}
-# The transcription prints 5/8 for the thickness; area and centroid are those of 3/8.
+# The copy that was read prints 5/8 for the thickness; area and centroid are those of 3/8.
 C1 = {"section": "2L4x3-1/2x3/8x3/8LLBB", "welded_element": "long leg", "weld_length_1": "8 in",
       "gusset_thickness": "1/2 in", "gusset_width": "16 in"}
 ASD = {"method": "ASD", "load_level": "ASD"}

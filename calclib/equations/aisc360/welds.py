@@ -6,7 +6,6 @@ from calclib.equations.form import Cite, equation, maximum, minimum, sin
 EDGE_ALLOWANCE = {"US": 1 / 16, "SI": 2.0}     # J2.2b: printed as pairs, in and mm
 EDGE_THICKNESS = {"US": 1 / 4, "SI": 6.0}      # J2.2b: the allowance holds from this thickness on
 LEAST_LAP = {"US": 1.0, "SI": 25.0}
-LEAST_SEGMENT = {"US": 1.5, "SI": 38.0}        # J2.2b: a segment of an intermittent fillet, besides four times its size
 
 
 @equation(cite("J2.2a"))
